@@ -1,0 +1,1 @@
+"""The crossbank service: rates crossflow tube banks over HTTP."""
