@@ -1,0 +1,5 @@
+"""Geometry of tube banks: areas, free-flow sections, volumes, masses; no contract and no fluids."""
+
+from crossbank_service.banks.geometry import TubeBank
+
+__all__ = ["TubeBank"]
