@@ -1,0 +1,108 @@
+"""One checked request in the engine's own terms: plain numbers, families of fluids, slugs of methods."""
+
+from dataclasses import dataclass, field
+from typing import Literal
+
+from crossbank.contract import Assumed, RateRequest
+from crossbank_service.rating._circuit import Circuit
+
+Curve = tuple[tuple[float, ...], tuple[float, ...]]
+NARROW_GAS_K = 600.0
+NARROW_LIQUID_K = 120.0
+
+InsideKind = Literal["held-surface", "condensing", "single-phase"]
+
+
+@dataclass(frozen=True)
+class FluidInput:
+    """A fluid by family (what may stand in one medium) and its own numbers.
+
+    Attributes
+    ----------
+    family : tuple
+        Such as ``("pure", "water", "liquid")``; fluids of one family differ in ``numbers`` only.
+    numbers : tuple
+        Parameters of this case: mass fraction, humidity ratio, or the lists of a table.
+    """
+
+    family: tuple[str, ...]
+    numbers: tuple[float | tuple[float, ...] | None, ...] = ()
+    gas: bool = True
+
+
+def narrow(fluid: FluidInput, span: float) -> bool:
+    """Whether the temperatures of a rating lie so close that local polynomials carry the properties."""
+    if fluid.family[0] in ("table", "saturation"):
+        return False
+    return span <= (NARROW_GAS_K if fluid.gas else NARROW_LIQUID_K)
+
+
+@dataclass(frozen=True)
+class InsideInput:
+    """The inside of a case; numbers without a meaning for its kind are 0."""
+
+    kind: InsideKind
+    fluid: FluidInput | None = None
+    temperature: float = 0.0
+    pressure: float = 0.0
+    superheat: float = 0.0
+    flow: float = 0.0
+    fouling: float = 0.0
+    loss_heads: float = 0.0
+
+
+@dataclass(frozen=True)
+class Case:
+    """A request that can be rated.
+
+    Attributes
+    ----------
+    bank : dict
+        The members of ``TubeBank`` as numbers.
+    conductivity : Curve
+        Of the tube metal [W/(m K)] over temperature [K].
+    outside_flow, outside_temperature, outside_pressure, outside_fouling : float
+        [kg/s], [K], [Pa], [m2 K/W]
+    methods : dict
+        Slug by role.
+    idle : str or None
+        Why the case exchanges no heat (a notice code); it is then rated with the heat balance left out.
+    """
+
+    request: RateRequest
+    bank: dict[str, float]
+    conductivity: Curve
+    outside_fluid: FluidInput
+    outside_flow: float
+    outside_temperature: float
+    outside_pressure: float
+    outside_fouling: float
+    humidity_ratio: float | None
+    inside: InsideInput
+    circuit: Circuit
+    segments: int
+    property_state: str
+    methods: dict[str, str]
+    idle: str | None = None
+    assumed: tuple[Assumed, ...] = field(default_factory=tuple)
+
+    @property
+    def span(self) -> float:
+        """Difference of the inlet temperatures, between which every temperature of the rating lies [K]."""
+        return abs(self.outside_temperature - self.inside.temperature)
+
+    @property
+    def group(self) -> tuple[object, ...]:
+        """Cases of one group are rated in one array."""
+        fluid = self.inside.fluid
+        return (
+            self.inside.kind,
+            self.outside_fluid.family,
+            fluid.family if fluid else (),
+            narrow(self.outside_fluid, self.span),
+            fluid is not None and narrow(fluid, self.span),
+            self.circuit,
+            self.segments,
+            self.property_state,
+            tuple(sorted(self.methods.items())),
+        )

@@ -1,0 +1,339 @@
+"""The row-resolved rating: films, heat balance and pressures of the grid, repeated to a tight tolerance.
+
+Given the films the heat balance is linear and solved exactly; the films and properties are renewed at its
+temperatures until nothing moves. Each case is relaxed and stopped by its own history alone, so that a case's result
+does not depend on the cases beside it.
+"""
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from crossbank_service.banks import TubeBank
+from crossbank_service.properties import Curve
+from crossbank_service.rating import _condensing, _outside, _single_phase
+from crossbank_service.rating._arrays import Array, Cases, Index, spread
+from crossbank_service.rating._circuit import Circuit
+from crossbank_service.rating._condensing import CondensingFilm, CondensingStream
+from crossbank_service.rating._network import Field, solve_known_inside
+from crossbank_service.rating._outside import OutsideDrop, OutsideFilm, OutsideStream
+from crossbank_service.rating._single_phase import SinglePhaseFilm, SinglePhaseStream
+from crossbank_service.rating._wall import Faces, Resistances, faces, wall_resistance
+
+MAX_ITERATIONS = 300
+DUTY_TOLERANCE = 1e-9
+RESISTANCE_TOLERANCE = 1e-8
+FILM_TOLERANCE = 1e-5
+PRESSURE_TOLERANCE = 1e-7
+LEAST_SECANT_STEP = 1e-8
+SLOPES = (-4.0, 0.6)
+
+
+@dataclass(frozen=True)
+class HeldSurface(Cases):
+    """Outer tube surfaces held at a temperature [K], (N,)."""
+
+    temperature: Array
+
+
+InsideStream = HeldSurface | CondensingStream | SinglePhaseStream
+InsideFilm = CondensingFilm | SinglePhaseFilm | None
+
+
+@dataclass(frozen=True)
+class Problem(Cases):
+    """N banks of one shape with their streams: everything a rating needs."""
+
+    bank: TubeBank
+    metal: Curve
+    outside: OutsideStream
+    inside: InsideStream
+    circuit: Circuit
+    segments: int
+
+    @property
+    def cases(self) -> int:
+        """How many."""
+        return len(self.outside.mass_flow)
+
+
+@dataclass(frozen=True)
+class Film(Cases):
+    """Logarithm of a film coefficient in every cell, with what its law answered to the value before it.
+
+    The law's answer depends on the coefficient through the surface temperature, mostly through that of the same cell
+    (h falls with the difference in a condensing film), so a secant a cell carries the repetition to its end.
+    """
+
+    log: Array
+    before: Array
+    answer: Array
+
+    @classmethod
+    def first(cls, log: Array) -> "Film":
+        """A film without a history."""
+        return cls(log, log, log)
+
+    def renewed(self, answer: Array, relax: Array) -> "Film":
+        """The next value, from what the law answers to this one."""
+        step = self.log - self.before
+        known = np.abs(step) > LEAST_SECANT_STEP
+        slope = np.where(known, (answer - self.answer) / np.where(known, step, 1.0), 0.0)
+        slope = np.clip(slope, *SLOPES)
+        return Film(self.log + relax * (answer - self.log) / (1.0 - slope), self.log, answer)
+
+    @property
+    def coefficient(self) -> Array:
+        """The film coefficient [W/(m2 K)]."""
+        return np.exp(self.log)
+
+
+@dataclass(frozen=True)
+class Iterate(Cases):
+    """Where the iteration stands; see ``Solution`` for the members."""
+
+    field: Field
+    walls: Faces
+    outside_film: Film
+    inside_film: Film | None
+    outside_pressure: Array
+    inside_pressure: Array | None
+    duty: Array
+    resistance_log: Array
+    pressure_change: Array
+
+
+@dataclass(frozen=True)
+class Solution(Cases):
+    """A converged grid, with everything a report needs."""
+
+    field: Field
+    walls: Faces
+    resistances: Resistances
+    outside: OutsideFilm
+    drop: OutsideDrop
+    inside: InsideFilm
+    iterations: Array
+    change: Array
+
+
+def solve(problem: Problem) -> Solution:
+    """Rate the cases of ``problem``; ``change`` above ``DUTY_TOLERANCE`` marks those that did not settle."""
+    n = problem.cases
+    current = _start(problem)
+    done: Iterate | None = None
+    iterations = np.zeros(n)
+    last_change = np.full(n, np.inf)
+    active: Index = np.arange(n)
+    part = problem
+    relax = np.ones(n)
+    previous = np.full(n, np.inf)
+    for count in range(1, MAX_ITERATIONS + 1):
+        # the pressures move little and cost much: they are renewed at every third step
+        new, worst, duty_change = _step(part, current, relax, renew_pressure=count <= 2 or count % 3 == 0)
+        settled = worst <= 1.0
+        iterations[active] = count
+        last_change[active] = duty_change
+        if done is None:
+            done = new.blank(n)
+        stop = settled | (count == MAX_ITERATIONS)
+        if stop.any():
+            done.put(active[stop], new.take(np.flatnonzero(stop)))
+        keep = np.flatnonzero(~stop)
+        if not len(keep):
+            break
+        # a case whose change does not fall is taken in smaller steps, one that falls steadily is let go again
+        slow = (worst > 0.8 * previous) & (count > 4)
+        relax = np.where(slow, np.maximum(0.6 * relax, 0.05), np.minimum(1.05 * relax, 1.0))
+        previous = worst
+        current = new
+        if len(keep) < len(active):
+            part, current = part.take(keep), new.take(keep)
+            relax, previous, active = relax[keep], previous[keep], active[keep]
+    assert done is not None
+    return _finish(problem, done, iterations, last_change)
+
+
+def _row_numbers(problem: Problem) -> Array:
+    return np.arange(1.0, problem.circuit.rows + 1.0)[None, :, None]
+
+
+def _start(problem: Problem) -> Iterate:
+    n, rows, segments = problem.cases, problem.circuit.rows, problem.segments
+    shape = (n, rows, segments)
+    cold = np.broadcast_to(problem.outside.inlet_temperature[:, None, None], shape).copy()
+    match problem.inside:
+        case HeldSurface():
+            inside = problem.inside.temperature
+            pressure = None
+        case CondensingStream():
+            inside = problem.inside.saturation.temperature(problem.inside.inlet_pressure)
+            pressure = np.broadcast_to(problem.inside.inlet_pressure[:, None, None], shape).copy()
+        case SinglePhaseStream():
+            inside = problem.inside.inlet_temperature
+            pressure = np.repeat(problem.inside.inlet_pressure[:, None], problem.circuit.passes + 1, axis=1)
+    warm = np.broadcast_to(inside[:, None, None], shape).copy()
+    middle = 0.5 * (cold + warm)
+    outside_pressure = np.repeat(problem.outside.inlet_pressure[:, None], rows + 1, axis=1)
+    film = _outside.film(
+        problem.bank, problem.outside, cold, middle, outside_pressure[:, :-1, None], _row_numbers(problem)
+    )
+    # a first heat from the outside film alone gives the condensing march a flow to start from
+    c_outside = _capacity_outside(problem, cold, cold, outside_pressure)
+    area = _cell_area(problem, cold)
+    field = solve_known_inside(
+        0.7 * film.coefficient * area, c_outside, problem.outside.inlet_temperature, warm
+    )
+    return Iterate(
+        field=field,
+        walls=Faces(middle, middle, middle, middle),
+        outside_film=Film.first(np.log(film.coefficient)),
+        inside_film=None,
+        outside_pressure=outside_pressure,
+        inside_pressure=pressure,
+        duty=field.heat.sum(axis=(1, 2)),
+        resistance_log=np.zeros(shape),
+        pressure_change=np.full(n, np.inf),
+    )
+
+
+def _cell_area(problem: Problem, like: Array) -> Array:
+    return spread(problem.bank.outside_area / (problem.bank.rows * problem.segments), like)
+
+
+def _capacity_outside(problem: Problem, first: Array, second: Array, pressure: Array) -> Array:
+    """Capacity rate of the outside stream through each cell [W/K], secant between the cell's ends."""
+    medium, p = problem.outside.medium, pressure[:, :1, None]
+    here = medium.at(0.5 * (first + second), p)
+    cp = _outside.secant_heat_capacity(medium, first, second, p, here)
+    return cp * spread(problem.outside.mass_flow / problem.segments, first)
+
+
+def _outside_film(problem: Problem, now: Iterate) -> OutsideFilm:
+    bulk = 0.5 * (now.field.outside_in + now.field.outside_out)
+    pressure = 0.5 * (now.outside_pressure[:, 1:] + now.outside_pressure[:, :-1])[:, :, None]
+    return _outside.film(
+        problem.bank, problem.outside, bulk, now.walls.outside_film, pressure, _row_numbers(problem)
+    )
+
+
+def _outside_drop(problem: Problem, now: Iterate) -> OutsideDrop:
+    bulk = 0.5 * (now.field.outside_in + now.field.outside_out).mean(axis=2)
+    ends = np.concatenate(
+        [now.field.outside_in[:, :1].mean(axis=2), now.field.outside_out.mean(axis=2)], axis=1
+    )
+    face = now.walls.outside_film.mean(axis=2)
+    return _outside.drop(problem.bank, problem.outside, bulk, face, ends, now.outside_pressure)
+
+
+def _inside_film(problem: Problem, now: Iterate) -> InsideFilm:
+    match problem.inside:
+        case HeldSurface():
+            return None
+        case CondensingStream() as stream:
+            assert now.inside_pressure is not None
+            return _condensing.film(
+                problem.bank, stream, now.field.heat, now.walls.inside_film, now.inside_pressure
+            )
+        case SinglePhaseStream() as stream:
+            assert now.inside_pressure is not None
+            return _single_phase.film(
+                problem.bank, stream, problem.circuit, now.field, now.walls.inside_film, now.inside_pressure
+            )
+
+
+def _resistances(problem: Problem, now: Iterate, outside: Film, inside: Film | None) -> Resistances:
+    like = now.field.heat
+    nothing = np.zeros((problem.cases, 1, 1))
+    fouling = spread(problem.outside.fouling, like)
+    if isinstance(problem.inside, HeldSurface) or inside is None:
+        return Resistances(1.0 / outside.coefficient, fouling, nothing, nothing, nothing, nothing)
+    ratio = spread(problem.bank.outside_area / problem.bank.inside_area, like)
+    wall = wall_resistance(problem.bank, problem.metal, 0.5 * (now.walls.inner_metal + now.walls.outer_metal))
+    return Resistances(
+        outside=1.0 / outside.coefficient,
+        outside_fouling=fouling,
+        fin_bond=nothing,
+        wall=wall,
+        inside_fouling=ratio * spread(problem.inside.fouling, like),
+        inside=ratio / inside.coefficient,
+    )
+
+
+def _balance(problem: Problem, film: InsideFilm, ua: Array, c_outside: Array) -> Field:
+    inlet = problem.outside.inlet_temperature
+    if isinstance(film, SinglePhaseFilm):
+        assert isinstance(problem.inside, SinglePhaseStream)
+        return _single_phase.balance(problem.inside, problem.circuit, film, ua, c_outside, inlet)
+    if isinstance(film, CondensingFilm):
+        return solve_known_inside(ua, c_outside, inlet, film.temperature)
+    assert isinstance(problem.inside, HeldSurface)
+    surface = np.broadcast_to(problem.inside.temperature[:, None, None], ua.shape)
+    return solve_known_inside(ua, c_outside, inlet, surface)
+
+
+def _step(
+    problem: Problem, now: Iterate, relax: Array, *, renew_pressure: bool
+) -> tuple[Iterate, Array, Array]:
+    """One renewal; returns the new iterate, each case's largest change over its tolerance, and its duty change."""
+    like = now.field.heat
+    weight = spread(relax, like)
+    outside = np.log(_outside_film(problem, now).coefficient)
+    change = np.abs(outside - now.outside_film.log).max(axis=(1, 2)) / FILM_TOLERANCE
+    outside_film = now.outside_film.renewed(outside, weight)
+
+    film = _inside_film(problem, now)
+    inside_film = None
+    inside_pressure = None
+    if film is not None:
+        inside = np.log(film.coefficient)
+        inside_pressure = film.pressure
+        if now.inside_film is not None:
+            moved = np.abs(inside - now.inside_film.log).max(axis=(1, 2))
+            change = np.maximum(change, moved / FILM_TOLERANCE)
+            inside_film = now.inside_film.renewed(inside, weight)
+            assert now.inside_pressure is not None
+            step = inside_pressure - now.inside_pressure
+            moved = np.abs(step / now.inside_pressure).reshape(len(change), -1).max(axis=1)
+            change = np.maximum(change, moved / PRESSURE_TOLERANCE)
+            inside_pressure = now.inside_pressure + spread(relax, step) * step
+        else:
+            inside_film = Film.first(inside)
+            change = np.full_like(change, np.inf)
+
+    resistances = _resistances(problem, now, outside_film, inside_film)
+    total = np.broadcast_to(resistances.total, like.shape)
+    ua = _cell_area(problem, like) / total
+    resistance = np.log(total)
+    moved = np.abs(resistance - now.resistance_log).max(axis=(1, 2))
+    change = np.maximum(change, moved / RESISTANCE_TOLERANCE)
+    c_outside = _capacity_outside(problem, now.field.outside_in, now.field.outside_out, now.outside_pressure)
+    field = _balance(problem, film, ua, c_outside)
+    walls = faces(resistances, field.inside_mean, field.heat / _cell_area(problem, like))
+    pressure, pressure_change = now.outside_pressure, now.pressure_change
+    if renew_pressure:
+        pressure = _outside_drop(problem, now).pressure
+        pressure_change = np.abs(pressure / now.outside_pressure - 1.0).max(axis=1)
+    change = np.maximum(change, pressure_change / PRESSURE_TOLERANCE)
+    duty = field.heat.sum(axis=(1, 2))
+    scale = np.maximum(np.abs(duty), 1e-9 * c_outside[:, 0].sum(axis=1))
+    duty_change = np.abs(duty - now.duty) / scale
+    new = Iterate(
+        field, walls, outside_film, inside_film, pressure, inside_pressure, duty, resistance, pressure_change
+    )
+    return new, np.maximum(change, duty_change / DUTY_TOLERANCE), duty_change
+
+
+def _finish(problem: Problem, done: Iterate, iterations: Array, change: Array) -> Solution:
+    film = _outside_film(problem, done)
+    inside = _inside_film(problem, done)
+    return Solution(
+        field=done.field,
+        walls=done.walls,
+        resistances=_resistances(problem, done, done.outside_film, done.inside_film),
+        outside=film,
+        drop=_outside_drop(problem, done),
+        inside=inside,
+        iterations=iterations,
+        change=change,
+    )

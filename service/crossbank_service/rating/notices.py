@@ -1,0 +1,84 @@
+"""Everything a rating can say beside its numbers: one catalogue of codes, severities and meanings."""
+
+from dataclasses import dataclass
+
+
+@dataclass(frozen=True)
+class NoticeKind:
+    """One notice: stable code, severity (``info``, ``caution``, ``warning``) and what it means."""
+
+    code: str
+    severity: str
+    meaning: str
+
+
+_KINDS = (
+    NoticeKind(
+        "estimate",
+        "caution",
+        "Results are estimates by published correlations. Local codes and licensed practice decide on pressure "
+        "parts, hot surfaces, freezing and corrosion.",
+    ),
+    NoticeKind(
+        "no-flow", "info", "A stream does not flow: no heat is exchanged and nothing is lost in pressure."
+    ),
+    NoticeKind("no-difference", "info", "Both streams enter at the same temperature: no heat is exchanged."),
+    NoticeKind(
+        "reverse-heat-flow",
+        "caution",
+        "The outside stream is at or above the saturation temperature of the vapour inside: nothing condenses.",
+    ),
+    NoticeKind(
+        "inside-boils",
+        "caution",
+        "The liquid inside reaches saturation, in its bulk or at the wall; it was computed as a liquid.",
+    ),
+    NoticeKind(
+        "outside-boils",
+        "caution",
+        "The liquid outside reaches saturation, in its bulk or at the wall; it was computed as a liquid.",
+    ),
+    NoticeKind(
+        "gas-condenses",
+        "caution",
+        "A vapour cools below its saturation temperature, in its bulk or at the wall; it was computed as a gas.",
+    ),
+    NoticeKind(
+        "surface-below-dew-point",
+        "caution",
+        "The outer surface is colder than the dew point of the outside stream; the surface was computed dry.",
+    ),
+    NoticeKind(
+        "method-out-of-range",
+        "caution",
+        "A correlation was used outside the range it is published for; its result is an extrapolation.",
+    ),
+    NoticeKind(
+        "method-doubt",
+        "caution",
+        "Something about a correlation that was used is doubtful, as its record says.",
+    ),
+    NoticeKind(
+        "side-gap-bypass",
+        "caution",
+        "The gap at the side walls is wider than half a tube gap: part of the stream bypasses the tubes, while "
+        "the result takes it as evenly spread.",
+    ),
+    NoticeKind(
+        "property-out-of-range",
+        "caution",
+        "A wall or stream temperature lies outside the range of a fluid's properties; the edge value was used.",
+    ),
+    NoticeKind(
+        "freezing",
+        "warning",
+        "A surface that a liquid touches is at or below the liquid's freezing temperature.",
+    ),
+    NoticeKind(
+        "vapour-pressure-exhausted",
+        "warning",
+        "The vapour loses a large share of its pressure on its way through the tubes.",
+    ),
+)
+
+NOTICES = {kind.code: kind for kind in _KINDS}
