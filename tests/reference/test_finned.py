@@ -13,7 +13,9 @@ _METHODS = {
     for module in (finned_annular, finned_plate, finned_serrated)
     for record in module.RECORDS
 }
-_CASES: list[dict[str, Any]] = tomllib.loads(Path(__file__).with_name("finned.toml").read_text("utf-8"))["case"]
+_CASES: list[dict[str, Any]] = tomllib.loads(Path(__file__).with_name("finned.toml").read_text("utf-8"))[
+    "case"
+]
 
 
 @pytest.mark.parametrize("case", _CASES, ids=lambda case: case["name"])

@@ -3,7 +3,7 @@
 import numpy as np
 
 from crossbank_service.methods._blend import elementwise
-from crossbank_service.methods.fin_surfaces import annular_area_ratio, fin_gap
+from crossbank_service.methods.fin_surfaces import annular_area_ratio, fin_gap, free_width, plate_areas
 from crossbank_service.methods.record import Array
 
 # Heights and thicknesses below this are no fins; the laws have powers of both and are held here.
@@ -12,6 +12,7 @@ LEAST_FIN_THICKNESS = 1e-6
 
 FIN_INPUTS = ("diameter_m", "fin_height_m", "fin_thickness_m", "fin_pitch_m")
 PITCHES = ("transverse_pitch_m", "longitudinal_pitch_m")
+PLATE_INPUTS = ("diameter_m", "fin_thickness_m", "fin_pitch_m", *PITCHES)
 
 
 def gap_over_height(fin_height_m: Array, fin_thickness_m: Array, fin_pitch_m: Array) -> Array:
@@ -53,3 +54,32 @@ def tip_over_root(*, fin_height_m: Array, diameter_m: Array | None = None, **_ot
 def longitudinal_ratio(*, longitudinal_pitch_m: Array, diameter_m: Array, **_others: Array) -> Array:
     """Longitudinal pitch over root diameter."""
     return longitudinal_pitch_m / diameter_m
+
+
+def plate_cell(
+    *,
+    arrangement: Array | float,
+    rows: Array,
+    diameter: Array,
+    thickness: Array,
+    pitch: Array,
+    transverse: Array,
+    longitudinal: Array,
+) -> tuple[Array, Array, Array]:
+    """Fin surface, collar surface and narrowest section of one tube, per metre of it [m2/m]."""
+    fin, collar = plate_areas(
+        diameter_m=diameter,
+        fin_thickness_m=thickness,
+        fin_pitch_m=pitch,
+        transverse_pitch_m=transverse,
+        longitudinal_pitch_m=longitudinal,
+        rows=rows,
+    )
+    width = free_width(
+        arrangement=arrangement,
+        transverse_pitch_m=transverse,
+        longitudinal_pitch_m=longitudinal,
+        blocked_width_m=diameter,
+        rows=rows,
+    )
+    return fin, collar, width * fin_gap(fin_pitch_m=pitch, fin_thickness_m=thickness) / pitch

@@ -6,7 +6,8 @@ from crossbank_service.methods import fin_efficiency, fin_efficiency_serrated
 from crossbank_service.methods.finned_area_ratio import GANGULI_1985
 from crossbank_service.methods.finned_briggs import BRIGGS_YOUNG_LOW_REYNOLDS_BLEND
 from crossbank_service.methods.finned_esdu import ESDU_84016, ESDU_84016_DROP, ESDU_86022_DROP
-from crossbank_service.methods.finned_plate import GRAY_WEBB_1986, WANG_CHI_CHANG_2000
+from crossbank_service.methods.finned_plate_gray import GRAY_WEBB_1986
+from crossbank_service.methods.finned_plate_wang import WANG_CHI_CHANG_2000
 from crossbank_service.methods.finned_serrated import WEIERMAN_1976, WEIERMAN_1976_DROP
 from crossbank_service.methods.record import Array
 

@@ -52,8 +52,9 @@ def _c4(
         np.where(staggered, 0.7 * crowding**0.20, 1.1 * crowding**0.15),
     )
     # tubes cannot stand closer than they are wide
-    spread = np.where(staggered, 0.05, 0.15) * np.maximum(pitch_ratio, 1.0)
-    return np.where(staggered, 0.11, 0.08) * spread**-exponent
+    spread: Array = np.where(staggered, 0.05, 0.15) * np.maximum(pitch_ratio, 1.0)
+    factor: Array = np.where(staggered, 0.11, 0.08) * spread**-exponent
+    return factor
 
 
 def _c5(quotient: Array, rows: Array, staggered: NDArray[np.bool_]) -> Array:

@@ -10,16 +10,11 @@ from hypothesis import assume, given, settings
 from hypothesis import strategies as st
 
 from crossbank_service.banks import TubeBank
-from crossbank_service.banks.fins import (
-    Layout,
+from crossbank_service.banks.fins import Layout, Surface, annular, plain, plate, serrated
+from crossbank_service.banks.fins_refusals import (
     Refusal,
-    Surface,
-    annular,
     fin_refusals,
     layout_refusals,
-    plain,
-    plate,
-    serrated,
     serration_refusals,
 )
 

@@ -407,7 +407,7 @@ def test_nusselt_rises_and_loss_falls_with_reynolds() -> None:
 
 def test_range_is_judged_by_fins_and_layout() -> None:
     """Diameter and pitch quotient outside Wang's data are both named; a fitting bank has no note."""
-    wang = finned_plate.WANG_CHI_CHANG_2000
+    wang = finned_plate.RECORDS[0]
     inside, notes = in_range(wang, {"reynolds": 2000.0, "prandtl": 0.7, "rows": 3.0, **PLATE})
     assert inside
     assert notes[0] is None
