@@ -5,7 +5,18 @@ throughout; the unit of a number is the end of its name.
 """
 
 from crossbank.contract._base import Request, Result, given
-from crossbank.contract.bank import Bank, Circuit, Curve, Layout, Material, Tube
+from crossbank.contract.bank import (
+    Annular,
+    Bank,
+    Circuit,
+    Curve,
+    Layout,
+    Material,
+    Plate,
+    RowGroup,
+    Serrated,
+    Tube,
+)
 from crossbank.contract.canonical import CONTRACT, bank_sha256, canonical, input_sha256
 from crossbank.contract.catalogue import (
     ConductivityCurve,
@@ -64,6 +75,7 @@ from crossbank.contract.streams import (
 __all__ = [
     "CONTRACT",
     "ActualVolume",
+    "Annular",
     "ApproachVelocity",
     "Assumed",
     "Bank",
@@ -102,6 +114,7 @@ __all__ = [
     "Outside",
     "OutsideResult",
     "OverallResult",
+    "Plate",
     "Problem",
     "Pure",
     "RateRequest",
@@ -113,7 +126,9 @@ __all__ = [
     "Request",
     "ResistanceShares",
     "Result",
+    "RowGroup",
     "RowResult",
+    "Serrated",
     "ServiceInfo",
     "ServiceLimits",
     "SinglePhase",

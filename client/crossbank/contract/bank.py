@@ -4,9 +4,13 @@ from typing import Annotated, Literal
 
 from msgspec import Meta
 
-from crossbank.contract._base import Request
+from crossbank.contract._base import Request, Tagged
 from crossbank.contract._units import (
     DiameterM,
+    FinHeightM,
+    FinPitchM,
+    FinThicknessM,
+    FoulingM2KW,
     GapM,
     LengthM,
     LossCoefficient,
@@ -75,6 +79,57 @@ class Tube(Request, kw_only=True, frozen=True):
     roughness_m: RoughnessM | None = 4.5e-5
 
 
+Attachment = Literal["tension-wound", "overlapped-foot", "embedded", "extruded", "brazed", "welded"]
+
+
+class Annular(Tagged, kw_only=True, frozen=True):
+    """Solid annular fins: `height_m` from tube to tip, `pitch_m` centre to centre.
+
+    `bond_resistance_m2_k_w` between fin and tube on the bare tube (null: typical of the attachment, none without one).
+    """
+
+    height_m: FinHeightM
+    thickness_m: FinThicknessM
+    pitch_m: FinPitchM
+    material: MaterialName | Material
+    bond_resistance_m2_k_w: FoulingM2KW | None = None
+    attachment: Attachment | None = None
+
+
+class Serrated(Tagged, kw_only=True, frozen=True):
+    """Annular fins cut into segments of `segment_width_m`; `cut_depth_m` from the tip (null: to the tube)."""
+
+    height_m: FinHeightM
+    thickness_m: FinThicknessM
+    pitch_m: FinPitchM
+    segment_width_m: FinHeightM
+    cut_depth_m: FinHeightM | None = None
+    material: MaterialName | Material
+    bond_resistance_m2_k_w: FoulingM2KW | None = None
+    attachment: Attachment | None = None
+
+
+class Plate(Tagged, kw_only=True, frozen=True):
+    """Continuous flat plates over all tubes, with full collars; `pitch_m` centre to centre."""
+
+    thickness_m: FinThicknessM
+    pitch_m: FinPitchM
+    material: MaterialName | Material
+    bond_resistance_m2_k_w: FoulingM2KW | None = None
+
+
+class RowGroup(Request, kw_only=True, frozen=True):
+    """Rows `first_row` to `last_row` (from 1 along the outside stream) with a surface of their own.
+
+    `tube` null: the bank's tube; `fins` null: bare tubes.
+    """
+
+    first_row: Rows
+    last_row: Rows
+    tube: Tube | None = None
+    fins: Annular | Serrated | Plate | None = None
+
+
 class Circuit(Request, kw_only=True, frozen=True):
     """How the inside stream runs through the rows.
 
@@ -92,9 +147,22 @@ class Bank(Request, kw_only=True, frozen=True):
 
     layout: Layout
     tube: Tube
-    fins: None = None
+    fins: Annular | Serrated | Plate | None = None
+    row_groups: Annotated[list[RowGroup], Meta(min_length=1, max_length=200)] | None = None
     circuit: Circuit | None = Circuit()
     tube_axis: Literal["horizontal"] | None = "horizontal"
 
 
-__all__ = ["Bank", "Circuit", "Curve", "Layout", "Material", "MaterialName", "Tube"]
+__all__ = [
+    "Annular",
+    "Bank",
+    "Circuit",
+    "Curve",
+    "Layout",
+    "Material",
+    "MaterialName",
+    "Plate",
+    "RowGroup",
+    "Serrated",
+    "Tube",
+]

@@ -8,6 +8,9 @@ from collections.abc import Mapping
 from types import MappingProxyType
 
 from crossbank_service.methods import (
+    finned_annular,
+    finned_plate,
+    finned_serrated,
     inside_condensing,
     inside_single_phase,
     inside_two_phase_drop,
@@ -22,6 +25,9 @@ from crossbank_service.methods.record import Array, DerivedLimit, Limit, Method
 _TOPICS: tuple[tuple[Method, ...], ...] = (
     outside_plain_heat.RECORDS,
     outside_plain_drop.RECORDS,
+    finned_annular.RECORDS,
+    finned_serrated.RECORDS,
+    finned_plate.RECORDS,
     inside_single_phase.RECORDS,
     inside_condensing.RECORDS,
     inside_two_phase_drop.RECORDS,

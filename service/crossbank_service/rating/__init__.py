@@ -10,7 +10,7 @@ from crossbank_service.errors import CoreError, Fault, Impossible, NotConverged,
 from crossbank_service.rating import _engine, _report
 from crossbank_service.rating._case import Case
 from crossbank_service.rating._door import enter
-from crossbank_service.rating._methods import applicable
+from crossbank_service.rating._methods import other_methods
 from crossbank_service.rating._performance import Performance
 from crossbank_service.rating._ranges import MethodRange
 from crossbank_service.rating._remarks import remarks
@@ -65,7 +65,7 @@ def _without_heat(case: Case) -> bool:
     return case.idle is not None
 
 
-def _refusal(case: Case, found: Performance, used: dict[str, MethodRange]) -> CoreError | None:
+def _refusal(case: Case, found: Performance, used: tuple[MethodRange, ...]) -> CoreError | None:
     change, residual = one(found.change), one(found.residual)
     if one(found.outside.choked) and case.outside_flow:
         drop = one(found.outside.friction_drop) + one(found.outside.momentum_drop)
@@ -79,13 +79,15 @@ def _refusal(case: Case, found: Performance, used: dict[str, MethodRange]) -> Co
             f"{change:.2e} of itself and the heat balance closed to {residual:.2e}."
         )
     if case.request.strict and not case.idle:
-        beyond = {role: each for role, each in used.items() if not each.within}
+        beyond = [each for each in used if not each.within]
         if beyond:
             return OutOfRange(
                 "A correlation would be used outside its published range.",
                 [
-                    Fault(pointer=f"/methods/{role}", detail=each.note or "", given=each.method.slug)
-                    for role, each in beyond.items()
+                    Fault(
+                        pointer=f"/methods/{each.method.role}", detail=each.note or "", given=each.method.slug
+                    )
+                    for each in beyond
                 ],
             )
     return None
@@ -103,29 +105,25 @@ def _with_comparisons(
     cases: list[Case], answers: list[RateResult | CoreError]
 ) -> list[RateResult | CoreError]:
     """Add to the answers that ask for it the same rating by every other applicable method."""
-    variants: list[tuple[int, str, Case]] = []
-    for i, (case, answer) in enumerate(zip(cases, answers, strict=True)):
-        if (
-            isinstance(answer, CoreError)
-            or not given(given(case.request.detail).compare_methods)
-            or case.idle
-        ):
-            continue
-        for role, chosen in case.methods.items():
-            for other in applicable(role, case.bank["staggered"] > 0.5, case.inside.kind):
-                if other.slug != chosen:
-                    variants.append((i, role, replace(case, methods={**case.methods, role: other.slug})))  # noqa: PERF401
-    rated = _engine.perform([variant for _, _, variant in variants])
+    variants = [
+        (i, role, slug, variant)
+        for i, (case, answer) in enumerate(zip(cases, answers, strict=True))
+        if not isinstance(answer, CoreError)
+        and given(given(case.request.detail).compare_methods)
+        and not case.idle
+        for role, slug, variant in other_methods(case)
+    ]
+    rated = _engine.perform([variant for *_, variant in variants])
     lists: dict[int, list[Comparison]] = {}
-    for (i, role, variant), (performance, used) in zip(variants, rated, strict=True):
+    for (i, role, slug, _), (performance, used) in zip(variants, rated, strict=True):
         if not one(performance.change) <= DUTY_CHANGE_TOLERANCE:
             continue
         inside = performance.inside
         lists.setdefault(i, []).append(
             Comparison(
                 role=role,
-                method=variant.methods[role],
-                in_range=used[role].within,
+                method=slug,
+                in_range=all(each.within for each in used if each.method.role == role),
                 duty_w=one(performance.duty),
                 outside_outlet_temperature_k=one(performance.outside.outlet_temperature),
                 inside_outlet_temperature_k=None if inside is None else one(inside.outlet_temperature),

@@ -45,6 +45,8 @@ def _names(kind: Any) -> tuple[str, ...]:
 def _take(value: Any, index: Index | slice) -> Any:
     if isinstance(value, np.ndarray):
         return value[index]
+    if isinstance(value, tuple):
+        return tuple(_take(each, index) for each in value)
     return value.take(index) if hasattr(value, "take") else value
 
 

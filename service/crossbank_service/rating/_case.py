@@ -10,6 +10,7 @@ Curve = tuple[tuple[float, ...], tuple[float, ...]]
 NARROW_GAS_K = 600.0
 NARROW_LIQUID_K = 120.0
 
+SurfaceKind = Literal["plain", "annular", "serrated", "plate"]
 InsideKind = Literal["held-surface", "condensing", "single-phase"]
 
 
@@ -52,26 +53,57 @@ class InsideInput:
 
 
 @dataclass(frozen=True)
+class SectionInput:
+    """Rows ``first`` to ``last`` - 1 (from 0) of one surface, with the methods that rate it.
+
+    Attributes
+    ----------
+    kind : str
+        ``plain``, ``annular``, ``serrated`` or ``plate``.
+    bank, fins : dict
+        The members of ``TubeBank`` and ``FinSet`` as numbers.
+    conductivity, fin_conductivity : Curve
+        Of tube and fin metal [W/(m K)] over temperature [K].
+    bond : float
+        Between fin and tube, on the bare tube [m2 K/W].
+    """
+
+    first: int
+    last: int
+    kind: SurfaceKind
+    bank: dict[str, float]
+    fins: dict[str, float]
+    conductivity: Curve
+    fin_conductivity: Curve
+    bond: float
+    attachment: str | None = None
+    heat_method: str = ""
+    drop_method: str = ""
+
+    @property
+    def shape(self) -> tuple[object, ...]:
+        """What sections of one array share."""
+        return (self.first, self.last, self.kind, self.heat_method, self.drop_method)
+
+
+@dataclass(frozen=True)
 class Case:
     """A request that can be rated.
 
     Attributes
     ----------
-    bank : dict
-        The members of ``TubeBank`` as numbers.
-    conductivity : Curve
-        Of the tube metal [W/(m K)] over temperature [K].
+    sections : tuple of SectionInput
+        The rows by their surfaces, first row first.
     outside_flow, outside_temperature, outside_pressure, outside_fouling : float
         [kg/s], [K], [Pa], [m2 K/W]
     methods : dict
-        Slug by role.
+        Slug by role, inside.
     idle : str or None
         Why the case exchanges no heat (a notice code); it is then rated with the heat balance left out.
     """
 
     request: RateRequest
-    bank: dict[str, float]
-    conductivity: Curve
+    sections: tuple[SectionInput, ...]
     outside_fluid: FluidInput
     outside_flow: float
     outside_temperature: float
@@ -85,6 +117,16 @@ class Case:
     methods: dict[str, str]
     idle: str | None = None
     assumed: tuple[Assumed, ...] = field(default_factory=tuple)
+
+    @property
+    def bank(self) -> dict[str, float]:
+        """The numbers of the first rows' bank: layout and bore are those of all rows."""
+        return self.sections[0].bank
+
+    @property
+    def finned(self) -> bool:
+        """Whether any row has fins."""
+        return any(section.kind != "plain" for section in self.sections)
 
     @property
     def span(self) -> float:
@@ -105,4 +147,5 @@ class Case:
             self.segments,
             self.property_state,
             tuple(sorted(self.methods.items())),
+            tuple(section.shape for section in self.sections),
         )

@@ -1,6 +1,5 @@
 """The door: a request is checked against physics and geometry and becomes plain numbers, once."""
 
-import math
 from dataclasses import replace
 
 import numpy as np
@@ -13,8 +12,8 @@ from crossbank.contract import (
     Condensing,
     HeldSurface,
     Mass,
-    Material,
     Outside,
+    Plate,
     Pure,
     RateRequest,
     ReferenceVolume,
@@ -22,16 +21,18 @@ from crossbank.contract import (
     broken_rules,
     given,
 )
-from crossbank.contract.names import fluid_slug, material_slug
+from crossbank.contract.names import fluid_slug
 from crossbank_service import properties
 from crossbank_service.errors import CoreError
 from crossbank_service.properties import psychrometrics
 from crossbank_service.rating import _fluid_door
-from crossbank_service.rating._case import Case, Curve, FluidInput, InsideInput
+from crossbank_service.rating._case import Case, FluidInput, InsideInput, SectionInput
 from crossbank_service.rating._circuit import Circuit
+from crossbank_service.rating._engine import bank_of
 from crossbank_service.rating._faults import Faults
 from crossbank_service.rating._fluids import medium_of
-from crossbank_service.rating._methods import choose
+from crossbank_service.rating._methods import choose_inside, choose_outside
+from crossbank_service.rating._surface_door import bond, sections_of
 
 PASS_LOSS_HEADS = 1.5  # entry 0.5 and exit 1.0 velocity heads, headers between passes alike
 VAPOUR_ENTRY_HEADS = 0.5
@@ -47,9 +48,8 @@ def enter(request: RateRequest) -> Case | CoreError:
         faults.reject(broken.pointer, broken.detail, broken.given)
     if faults:
         return faults.error()
-    _geometry(request.bank, faults)
+    sections = sections_of(request.bank, faults)
     circuit = _circuit(request.bank, faults)
-    conductivity, density = _material(request.bank, faults)
     detail = given(request.detail)
     property_state = given(detail.property_state)
     if detail.resolution == "row" and property_state != "local":
@@ -78,15 +78,21 @@ def enter(request: RateRequest) -> Case | CoreError:
         )
     if faults or fluid is None or inside is None or circuit is None:
         return faults.error()
-    bank = _numbers(request.bank, density)
-    flow = _mass_flow(request.outside, fluid, pressure, bank, faults)
-    methods = choose(request, bank["staggered"] > 0.5, fluid.gas, inside.kind, faults)
-    if faults or methods is None:
+    if detail.resolution == "bank" and len(sections) > 1:
+        faults.reject(
+            "/detail/resolution",
+            "Row groups have coefficients of their own; they are rated with resolution 'row'.",
+            "bank",
+            one_of=("row",),
+        )
+    flow = _mass_flow(request.outside, fluid, pressure, sections[0], faults)
+    methods = choose_inside(request, inside.kind, faults)
+    sections = choose_outside(request, sections, gas=fluid.gas, faults=faults)
+    if faults:
         return faults.error()
     case = Case(
         request=request,
-        bank=bank,
-        conductivity=conductivity,
+        sections=sections,
         outside_fluid=fluid,
         outside_flow=flow,
         outside_temperature=request.outside.inlet_temperature_k,
@@ -98,61 +104,9 @@ def enter(request: RateRequest) -> Case | CoreError:
         segments=_segments(request, inside, circuit),
         property_state=property_state,
         methods=methods,
-        assumed=_assumed(request, inside, pressure),
+        assumed=_assumed(request, inside, pressure, sections),
     )
     return replace(case, idle=_idle(case))
-
-
-def _geometry(bank: Bank, faults: Faults) -> None:
-    layout, tube = bank.layout, bank.tube
-    d, st, sl = tube.outer_diameter_m, layout.transverse_pitch_m, layout.longitudinal_pitch_m
-    if tube.wall_thickness_m >= 0.5 * d:
-        faults.refuse(
-            "/bank/tube/wall_thickness_m",
-            "The wall is as thick as the tube's radius or thicker: no bore is left.",
-            tube.wall_thickness_m,
-            "m",
-            at_most=0.5 * d,
-        )
-    if st <= d:
-        faults.refuse(
-            "/bank/layout/transverse_pitch_m",
-            "Tubes side by side touch or overlap: the transverse pitch must exceed the outer diameter.",
-            st,
-            "m",
-            at_least=d,
-        )
-    if layout.rows == 1:
-        return
-    if layout.arrangement == "inline":
-        if sl <= d:
-            faults.refuse(
-                "/bank/layout/longitudinal_pitch_m",
-                "Tubes behind each other touch or overlap: the longitudinal pitch must exceed the outer diameter.",
-                sl,
-                "m",
-                at_least=d,
-            )
-        return
-    if math.hypot(0.5 * st, sl) <= d:
-        least = math.sqrt(max(d * d - 0.25 * st * st, 0.0))
-        faults.refuse(
-            "/bank/layout/longitudinal_pitch_m",
-            "Tubes of neighbouring rows touch or overlap: the diagonal pitch "
-            f"{math.hypot(0.5 * st, sl):.6g} m must exceed the outer diameter {d:g} m.",
-            sl,
-            "m",
-            at_least=least,
-        )
-    elif layout.rows > 2 and 2.0 * sl <= d:
-        faults.refuse(
-            "/bank/layout/longitudinal_pitch_m",
-            "Tubes two rows apart stand behind each other and touch: twice the longitudinal pitch must exceed "
-            "the outer diameter.",
-            sl,
-            "m",
-            at_least=0.5 * d,
-        )
 
 
 def _circuit(bank: Bank, faults: Faults) -> Circuit | None:
@@ -170,43 +124,6 @@ def _circuit(bank: Bank, faults: Faults) -> Circuit | None:
     return Circuit((rows // passes,) * passes, against=circuit.direction == "against")
 
 
-def _material(bank: Bank, faults: Faults) -> tuple[Curve, float]:
-    material = bank.tube.material
-    if isinstance(material, Material):
-        k = material.conductivity_w_m_k
-        curve: Curve = ((300.0,), (k,)) if isinstance(k, float) else (tuple(k.temperature_k), tuple(k.value))
-        return curve, material.density_kg_m3 or 0.0
-    records = {record.slug: record for record in properties.material_records()}
-    record = records.get(material_slug(material))
-    if record is None:
-        faults.reject(
-            "/bank/tube/material",
-            f"'{material}' is not a material of this service; /v1/materials lists them, or give your own.",
-            material,
-            one_of=tuple(records),
-        )
-        return ((300.0,), (1.0,)), 0.0
-    return record.conductivity_w_m_k, record.density_kg_m3
-
-
-def _numbers(bank: Bank, density: float) -> dict[str, float]:
-    layout, tube = bank.layout, bank.tube
-    half_gap = 0.5 * (layout.transverse_pitch_m - tube.outer_diameter_m)
-    return {
-        "staggered": 1.0 if layout.arrangement == "staggered" else 0.0,
-        "transverse_pitch": layout.transverse_pitch_m,
-        "longitudinal_pitch": layout.longitudinal_pitch_m,
-        "rows": float(layout.rows),
-        "tubes_per_row": float(layout.tubes_per_row),
-        "tube_length": layout.tube_length_m,
-        "side_gap": half_gap if layout.side_gap_m is None else layout.side_gap_m,
-        "outer_diameter": tube.outer_diameter_m,
-        "wall_thickness": tube.wall_thickness_m,
-        "roughness": given(tube.roughness_m),
-        "tube_density": density,
-    }
-
-
 def _outside_pressure(outside: Outside) -> float:
     if outside.inlet_pressure_pa is not None:
         return outside.inlet_pressure_pa
@@ -214,7 +131,7 @@ def _outside_pressure(outside: Outside) -> float:
 
 
 def _mass_flow(
-    outside: Outside, fluid: FluidInput, pressure: float, bank: dict[str, float], faults: Faults
+    outside: Outside, fluid: FluidInput, pressure: float, section: SectionInput, faults: Faults
 ) -> float:
     flow = outside.flow
     if isinstance(flow, Mass):
@@ -232,12 +149,7 @@ def _mass_flow(
         case ActualVolume() | ReferenceVolume():
             return flow.m3_s * density
         case ApproachVelocity():
-            width = (
-                (bank["tubes_per_row"] - 1.0) * bank["transverse_pitch"]
-                + bank["outer_diameter"]
-                + 2.0 * bank["side_gap"]
-            )
-            return flow.m_s * width * bank["tube_length"] * density
+            return flow.m_s * float(bank_of([section]).face_area[0]) * density
 
 
 def _inside(request: RateRequest, faults: Faults) -> InsideInput | None:
@@ -355,14 +267,30 @@ def _idle(case: Case) -> str | None:
     return None
 
 
-def _assumed(request: RateRequest, inside: InsideInput, pressure: float) -> tuple[Assumed, ...]:
+def _assumed(
+    request: RateRequest, inside: InsideInput, pressure: float, sections: tuple[SectionInput, ...]
+) -> tuple[Assumed, ...]:
     layout, tube, outside = request.bank.layout, request.bank.tube, request.outside
     out = []
     if layout.side_gap_m is None:
-        gap = 0.5 * (layout.transverse_pitch_m - tube.outer_diameter_m)
+        what = "fin tips" if sections[0].kind != "plain" else "tubes"
         out.append(
             Assumed(
-                pointer="/bank/layout/side_gap_m", value=gap, unit="m", why="half the clear gap between tubes"
+                pointer="/bank/layout/side_gap_m",
+                value=sections[0].bank["side_gap"],
+                unit="m",
+                why=f"half the clear gap between {what}",
+            )
+        )
+    fins = request.bank.fins
+    if fins is not None and fins.bond_resistance_m2_k_w is None:
+        attachment = None if isinstance(fins, Plate) else fins.attachment
+        out.append(
+            Assumed(
+                pointer="/bank/fins/bond_resistance_m2_k_w",
+                value=bond(fins),
+                unit="m2 K/W",
+                why=f"typical of {attachment} fins" if attachment else "fins in full contact with the tube",
             )
         )
     if outside.inlet_pressure_pa is None:

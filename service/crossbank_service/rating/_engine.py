@@ -3,21 +3,23 @@
 from collections import defaultdict
 from collections.abc import Sequence
 from dataclasses import replace
+from typing import Any
 
 import numpy as np
 
 from crossbank_service import properties
-from crossbank_service.banks import TubeBank
+from crossbank_service.banks import FinSet, TubeBank
 from crossbank_service.properties import Medium
 from crossbank_service.rating import _lumped, _performance, _solver
 from crossbank_service.rating._arrays import Array
-from crossbank_service.rating._case import Case, FluidInput, InsideInput, narrow
+from crossbank_service.rating._case import Case, FluidInput, InsideInput, SectionInput, narrow
 from crossbank_service.rating._condensing import CondensingStream, entering_enthalpy
 from crossbank_service.rating._fluids import local_medium, medium_of
 from crossbank_service.rating._methods import method
 from crossbank_service.rating._outside import OutsideStream
 from crossbank_service.rating._performance import Performance
 from crossbank_service.rating._ranges import ArrayRange, MethodRange, ranges
+from crossbank_service.rating._section import Section
 from crossbank_service.rating._single_phase import SinglePhaseStream
 from crossbank_service.rating._solver import HeldSurface, InsideStream, Problem
 
@@ -27,7 +29,7 @@ CELLS_PER_CHUNK = 16_000
 STILL_FLOW = 1e-6
 """Stands for no flow [kg/s] in a rating whose heat and losses are then written as 0."""
 
-Rated = tuple[Performance, dict[str, MethodRange]]
+Rated = tuple[Performance, tuple[MethodRange, ...]]
 
 
 def adiabatic(case: Case) -> Case:
@@ -37,7 +39,7 @@ def adiabatic(case: Case) -> Case:
         inside=InsideInput("held-surface", temperature=case.outside_temperature),
         outside_flow=case.outside_flow or STILL_FLOW,
         segments=1,
-        methods={role: slug for role, slug in case.methods.items() if role.startswith("outside")},
+        methods={},
     )
 
 
@@ -57,12 +59,12 @@ def perform(cases: Sequence[Case]) -> list[Rated]:
             for place, i in enumerate(chunk):
                 out[i] = (
                     performance.take(slice(place, place + 1)),
-                    {role: each.of_case(place) for role, each in found.items()},
+                    _distinct([each.of_case(place) for each in found]),
                 )
     return [each for each in out if each is not None]
 
 
-def rate_problem(problem: Problem, property_state: str) -> tuple[Performance, dict[str, ArrayRange]]:
+def rate_problem(problem: Problem, property_state: str) -> tuple[Performance, list[ArrayRange]]:
     """Rate the cases of one array."""
     if property_state == "local":
         solution = _solver.solve(problem)
@@ -74,18 +76,14 @@ def rate_problem(problem: Problem, property_state: str) -> tuple[Performance, di
 def problem_of(cases: Sequence[Case]) -> Problem:
     """The arrays of cases of one group."""
     first = cases[0]
-    bank = TubeBank(**{name: np.array([case.bank[name] for case in cases]) for name in first.bank})
     return Problem(
-        bank=bank,
-        metal=properties.Curve.of([case.conductivity for case in cases]),
+        sections=tuple(_section([case.sections[i] for case in cases]) for i in range(len(first.sections))),
         outside=OutsideStream(
             medium=_medium(cases, [case.outside_fluid for case in cases], _column(cases, "outside_pressure")),
             mass_flow=_column(cases, "outside_flow"),
             inlet_temperature=_column(cases, "outside_temperature"),
             inlet_pressure=_column(cases, "outside_pressure"),
             fouling=_column(cases, "outside_fouling"),
-            heat_method=method("outside_heat_transfer", first.methods["outside_heat_transfer"]),
-            drop_method=method("outside_pressure_drop", first.methods["outside_pressure_drop"]),
         ),
         inside=_inside(cases),
         circuit=first.circuit,
@@ -95,6 +93,48 @@ def problem_of(cases: Sequence[Case]) -> Problem:
 
 def _column(cases: Sequence[Case], name: str) -> Array:
     return np.array([getattr(case, name) for case in cases])
+
+
+def _distinct(used: list[MethodRange]) -> tuple[MethodRange, ...]:
+    """The methods of a case: row groups that share one say it once, out of range if it is in either."""
+    kept: dict[tuple[str, str], MethodRange] = {}
+    for each in used:
+        key = each.method.role, each.method.slug
+        if key not in kept or not each.within:
+            kept[key] = each
+    return tuple(kept.values())
+
+
+def bank_of(sections: Sequence[SectionInput]) -> TubeBank:
+    """The geometry of the same rows of some cases."""
+
+    def column(name: str) -> Array:
+        return np.array([section.bank[name] for section in sections])
+
+    numbers: Any = {name: column(name) for name in sections[0].bank}
+    bank = TubeBank(**numbers)
+    kind = sections[0].kind
+    if kind == "plain":
+        return bank
+    return replace(
+        bank,
+        fins=FinSet(kind, **{name: np.array([s.fins[name] for s in sections]) for name in sections[0].fins}),
+    )
+
+
+def _section(sections: Sequence[SectionInput]) -> Section:
+    first = sections[0]
+    finned = first.kind != "plain"
+    return Section(
+        first=first.first,
+        last=first.last,
+        bank=bank_of(sections),
+        metal=properties.Curve.of([section.conductivity for section in sections]),
+        fin_metal=properties.Curve.of([section.fin_conductivity for section in sections]) if finned else None,
+        bond=np.array([section.bond for section in sections]),
+        heat_method=method("outside_heat_transfer", first.heat_method),
+        drop_method=method("outside_pressure_drop", first.drop_method),
+    )
 
 
 def _medium(cases: Sequence[Case], fluids: Sequence[FluidInput], pressure: Array) -> Medium:

@@ -4,7 +4,7 @@ Outside properties at the inlet or at the mean of the terminals, inside properti
 condensing at quality 0.5; P(NTU, C) of the rows and passes is exact for constant coefficients.
 """
 
-from dataclasses import dataclass
+from dataclasses import dataclass, fields
 
 import numpy as np
 
@@ -12,10 +12,10 @@ from crossbank_service.methods.effectiveness import effectiveness
 from crossbank_service.rating import _condensing, _outside, _single_phase
 from crossbank_service.rating._arrays import Array, Cases
 from crossbank_service.rating._condensing import CondensingStream
-from crossbank_service.rating._outside import OutsideDrop
+from crossbank_service.rating._outside import OutsideDrop, OutsideFilm
 from crossbank_service.rating._single_phase import SinglePhaseStream
 from crossbank_service.rating._solver import DUTY_TOLERANCE, HeldSurface, Problem
-from crossbank_service.rating._wall import Faces, Resistances, faces, wall_resistance
+from crossbank_service.rating._wall import Faces, Resistances, faces, in_series
 
 MAX_ITERATIONS = 200
 
@@ -78,6 +78,10 @@ def _column(values: Array) -> Array:
     return values[:, None]
 
 
+def _cell(values: Array) -> Array:
+    return values[:, None, None]
+
+
 class _Lumped:
     """The renewal of a lumped rating; films are evaluated on (N, 1) arrays."""
 
@@ -94,48 +98,43 @@ class _Lumped:
 
     def start(self) -> Lump:
         inlet, inside = self.problem.outside.inlet_temperature, self.inside_inlet
-        middle = 0.5 * (inlet + inside)
-        walls = Faces(middle, middle, middle, middle)
-        stream = self.problem.outside
+        walls = Faces.at(0.5 * (inlet + inside))
         # the first heat comes from the outside film alone
-        film = _outside.film(
-            self.problem.bank,
-            stream,
-            _column(inlet),
-            _column(middle),
-            _column(stream.inlet_pressure),
-            None,
-        )
-        nothing = np.zeros_like(inlet)
-        r = Resistances(1.0 / film.coefficient[:, 0], stream.fouling, nothing, nothing, nothing, nothing)
+        film = self._film(inlet, walls)
+        r = self._resistances(film.coefficient[:, 0], walls, None)
         return self._close(r, film.coefficient[:, 0], film.reynolds[:, 0], walls, inlet, None, None, 0.0)
 
     def renew(self, now: Lump, count: float) -> Lump:
-        problem = self.problem
-        bank, stream = problem.bank, problem.outside
-        bulk = self._property_temperature(now.outside_outlet)
-        pressure = stream.inlet_pressure
-        film = _outside.film(
-            bank, stream, _column(bulk), _column(now.walls.outside_film), _column(pressure), None
-        )
+        film = self._film(self._property_temperature(now.outside_outlet), now.walls)
         inside = self._inside(now)
-        nothing = np.zeros_like(now.duty)
-        if inside is None:
-            r = Resistances(1.0 / film.coefficient[:, 0], stream.fouling, nothing, nothing, nothing, nothing)
-        else:
-            assert not isinstance(problem.inside, HeldSurface)
-            ratio = bank.outside_area / bank.inside_area
-            wall = wall_resistance(bank, problem.metal, 0.5 * (now.walls.inner_metal + now.walls.outer_metal))
-            r = Resistances(
-                outside=1.0 / film.coefficient[:, 0],
-                outside_fouling=stream.fouling,
-                fin_bond=nothing,
-                wall=wall,
-                inside_fouling=ratio * problem.inside.fouling,
-                inside=ratio / inside.coefficient,
-            )
+        r = self._resistances(film.coefficient[:, 0], now.walls, inside)
         return self._close(
             r, film.coefficient[:, 0], film.reynolds[:, 0], now.walls, now.outside_outlet, inside, now, count
+        )
+
+    def _film(self, bulk: Array, walls: Faces) -> OutsideFilm:
+        stream = self.problem.outside
+        return _outside.film(
+            self.problem.sections[0],
+            stream,
+            _column(bulk),
+            _column(walls.outside_film),
+            _column(stream.inlet_pressure),
+            _column(walls.fin_mean),
+            None,
+        )
+
+    def _resistances(self, film: Array, walls: Faces, inside: InsideLump | None) -> Resistances:
+        problem = self.problem
+        within = None
+        if inside is not None and not isinstance(problem.inside, HeldSurface):
+            within = _cell(inside.coefficient), _cell(problem.inside.fouling)
+        cells = Faces(*(_cell(getattr(walls, f.name)) for f in fields(Faces)))
+        one_row = problem.wall.take_rows(0)
+        fouling = _cell(problem.outside.fouling)
+        found = in_series((problem.sections[0],), one_row, _cell(film), fouling, cells, within)
+        return Resistances(
+            *(np.broadcast_to(getattr(found, f.name)[:, 0, 0], film.shape) for f in fields(Resistances))
         )
 
     def _property_temperature(self, outlet: Array) -> Array:
@@ -159,7 +158,7 @@ class _Lumped:
         bulk = self._property_temperature(outlet)
         state = stream.medium.at(bulk, stream.inlet_pressure)
         c_outside = stream.mass_flow * state.heat_capacity_j_kg_k
-        area = problem.bank.outside_area
+        area = problem.outside_area
         ua = area / r.total
         ntu = ua / c_outside
         if inside is not None and isinstance(problem.inside, SinglePhaseStream):
@@ -210,7 +209,7 @@ class _Lumped:
         ends = inlet + share * (_column(outlet) - inlet)
         # hand calculations take densities at the inlet pressure throughout
         pressure = np.repeat(_column(stream.inlet_pressure), rows + 1, axis=1)
-        return _outside.drop(self.problem.bank, stream, bulk, face, ends, pressure)
+        return _outside.drop(self.problem.sections, stream, bulk, face, ends, pressure)
 
     def _inside(self, now: Lump) -> InsideLump | None:
         match self.problem.inside:

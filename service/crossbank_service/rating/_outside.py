@@ -4,10 +4,10 @@ from dataclasses import dataclass
 
 import numpy as np
 
-from crossbank_service.banks import TubeBank
 from crossbank_service.methods.record import Method
 from crossbank_service.properties import Medium, State
 from crossbank_service.rating._arrays import Array, Cases, spread
+from crossbank_service.rating._section import Section
 
 Values = dict[str, Array]
 
@@ -20,14 +20,13 @@ def evaluate(method: Method, values: Values) -> Array:
 
 @dataclass(frozen=True)
 class OutsideStream(Cases):
-    """The outside stream of N cases and the methods that rate it; arrays (N,), SI.
+    """The outside stream of N cases; arrays (N,), SI.
 
     Attributes
     ----------
     medium : Medium
     mass_flow, inlet_temperature, inlet_pressure, fouling : Array
         [kg/s], [K], [Pa], [m2 K/W]
-    heat_method, drop_method : Method
     """
 
     medium: Medium
@@ -35,8 +34,6 @@ class OutsideStream(Cases):
     inlet_temperature: Array
     inlet_pressure: Array
     fouling: Array
-    heat_method: Method
-    drop_method: Method
 
 
 @dataclass(frozen=True)
@@ -63,64 +60,76 @@ class OutsideDrop(Cases):
     pressure: Array
 
 
-def layout_values(bank: TubeBank, medium: Medium, like: Array) -> Values:
-    """The quantities of the nomenclature that a bank and a fluid's kind decide, shaped against ``like``."""
-    return {
+def layout_values(section: Section, medium: Medium, like: Array) -> Values:
+    """The quantities of the nomenclature that a surface and a fluid's kind decide, shaped against ``like``."""
+    bank = section.bank
+    values = {
         "arrangement": spread(bank.staggered, like),
         "transverse_pitch_ratio": spread(bank.a, like),
         "longitudinal_pitch_ratio": spread(bank.b, like),
         "rows": spread(bank.rows, like),
         "gas": np.full((like.shape[0],) + (1,) * (like.ndim - 1), float(medium.gas)),
     }
+    return values if bank.fins is None else {**values, **section.fin_values(like)}
 
 
-def mass_flux(bank: TubeBank, stream: OutsideStream) -> Array:
+def mass_flux(section: Section, stream: OutsideStream) -> Array:
     """Mass flux in the narrowest section [kg/(m2 s)], (N,)."""
-    return stream.mass_flow / bank.free_area
+    return stream.mass_flow / section.bank.free_area
 
 
-def film_values(bank: TubeBank, stream: OutsideStream, bulk: Array, face: Array, pressure: Array) -> Values:
-    """Everything an outside heat transfer method may ask for, at given bulk and surface temperatures."""
-    flux, d = spread(mass_flux(bank, stream), bulk), spread(bank.outer_diameter, bulk)
-    method = stream.heat_method
+def film_values(
+    section: Section, stream: OutsideStream, bulk: Array, face: Array, pressure: Array, fin: Array
+) -> Values:
+    """Everything an outside heat transfer method may ask for, at given bulk, surface and fin temperatures."""
+    flux, d = spread(mass_flux(section, stream), bulk), spread(section.bank.root_diameter, bulk)
+    method = section.heat_method
     at_film = method.properties_at == "film"
     here = stream.medium.at(0.5 * (bulk + face) if at_film else bulk, pressure)
-    values = layout_values(bank, stream.medium, bulk)
+    values = layout_values(section, stream.medium, bulk)
     values["reynolds"] = flux * d / here.viscosity_pa_s
     values["prandtl"] = here.prandtl
     values["conductivity"] = here.conductivity_w_m_k
     if not at_film and "prandtl_wall" in method.options:
         values["prandtl_wall"] = stream.medium.at(face, pressure).prandtl
     values["temperature_ratio"] = bulk / face
+    values["gas_temperature_k"] = bulk
+    values["fin_temperature_k"] = fin
     return values
 
 
 def film(
-    bank: TubeBank, stream: OutsideStream, bulk: Array, face: Array, pressure: Array, row: Array | None
+    section: Section,
+    stream: OutsideStream,
+    bulk: Array,
+    face: Array,
+    pressure: Array,
+    fin: Array,
+    row: Array | None,
 ) -> OutsideFilm:
-    """Film coefficient at bulk and surface temperatures.
+    """Film coefficient of the rows of one surface at bulk and surface temperatures.
 
     Parameters
     ----------
-    bulk, face, pressure : Array (N, ...)
-        [K], [K], [Pa]; face is the surface the fluid touches.
+    bulk, face, pressure, fin : Array (N, ...)
+        [K], [K], [Pa], [K]; ``face`` is the mean surface the fluid touches, ``fin`` the mean of the fins.
     row : Array or None
         Row of each place, counted from 1 (broadcasts against ``bulk``); None gives the mean over the rows.
     """
-    values = film_values(bank, stream, bulk, face, pressure)
-    method = stream.heat_method
+    values = film_values(section, stream, bulk, face, pressure, fin)
+    method = section.heat_method
     nusselt = evaluate(method, values)
     if row is not None and method.row_share is not None:
         names = (*method.inputs, *(name for name in method.options if name in values))
         nusselt = nusselt * method.row_share(row=row, **{name: values[name] for name in names})
-    h = nusselt * values["conductivity"] / spread(bank.outer_diameter, bulk)
+    h = nusselt * values["conductivity"] / spread(section.bank.root_diameter, bulk)
     return OutsideFilm(
         h, np.broadcast_to(values["reynolds"], h.shape), np.broadcast_to(values["prandtl"], h.shape)
     )
 
 
 def drop(
-    bank: TubeBank,
+    sections: tuple[Section, ...],
     stream: OutsideStream,
     bulk: Array,
     face: Array,
@@ -143,18 +152,12 @@ def drop(
     Each row takes an even share of the bank's resistances, friction = xi G_max^2/(2 rho) at the row's density;
     momentum is that of the empty duct, G_face^2 (1/rho_out - 1/rho_in), so that the parts add up duct to duct.
     """
-    flux = spread(mass_flux(bank, stream), bulk)
     middle = 0.5 * (pressure[:, 1:] + pressure[:, :-1])
-    here = stream.medium.at(bulk, middle)
+    density = stream.medium.at(bulk, middle).density_kg_m3
     at_ends = stream.medium.at(ends, pressure).density_kg_m3
-    values = layout_values(bank, stream.medium, bulk)
-    values["reynolds"] = flux * spread(bank.outer_diameter, bulk) / here.viscosity_pa_s
-    if "viscosity_ratio" in stream.drop_method.options:
-        values["viscosity_ratio"] = stream.medium.at(face, middle).viscosity_pa_s / here.viscosity_pa_s
-    loss = evaluate(stream.drop_method, values)
-    heads = flux**2 / (2.0 * here.density_kg_m3)
-    friction = loss * heads * resistances(bank, stream, bulk) / spread(bank.rows, bulk)
-    face_flux = spread(stream.mass_flow / bank.face_area, bulk)
+    parts = [_friction(each, stream, bulk, face, middle) for each in sections]
+    loss, reynolds, friction = (np.concatenate(part, axis=1) for part in zip(*parts, strict=True))
+    face_flux = spread(stream.mass_flow / sections[0].bank.face_area, bulk)
     momentum = face_flux**2 * (1.0 / at_ends[:, 1:] - 1.0 / at_ends[:, :-1])
     along = np.concatenate([np.zeros((bulk.shape[0], 1)), np.cumsum(friction + momentum, axis=1)], axis=1)
     # a pressure below a tenth of the inlet's is no state of a bank; the floor keeps the iteration finite
@@ -162,21 +165,40 @@ def drop(
     return OutsideDrop(
         friction=friction,
         momentum=momentum,
-        density=here.density_kg_m3,
+        density=density,
         loss_coefficient=loss,
-        reynolds=values["reynolds"],
+        reynolds=reynolds,
         pressure=np.maximum(stream.inlet_pressure[:, None] - along, floor),
     )
 
 
-def resistances(bank: TubeBank, stream: OutsideStream, like: Array) -> Array:
-    """Row resistances the pressure drop method counts, shaped against ``like``."""
-    count = stream.drop_method.resistances
-    if count is None:
-        return spread(bank.rows, like)
-    values = layout_values(bank, stream.medium, like)
-    names = ("arrangement", "transverse_pitch_ratio", "longitudinal_pitch_ratio", "rows")
-    return np.asarray(count(**{name: values[name] for name in names}))
+def _friction(
+    section: Section, stream: OutsideStream, bulk: Array, face: Array, pressure: Array
+) -> tuple[Array, Array, Array]:
+    """Loss coefficient, Reynolds number and friction [Pa] of the rows of one surface."""
+    here_rows = section.rows
+    bulk, face, pressure = bulk[:, here_rows], face[:, here_rows], pressure[:, here_rows]
+    method = section.drop_method
+    flux = spread(mass_flux(section, stream), bulk)
+    here = stream.medium.at(bulk, pressure)
+    values = layout_values(section, stream.medium, bulk)
+    values["reynolds"] = flux * spread(section.bank.root_diameter, bulk) / here.viscosity_pa_s
+    values["gas_temperature_k"] = bulk
+    values["fin_temperature_k"] = face
+    if "viscosity_ratio" in method.options:
+        values["viscosity_ratio"] = stream.medium.at(face, pressure).viscosity_pa_s / here.viscosity_pa_s
+    loss = evaluate(method, values)
+    rows = spread(section.bank.rows, bulk)
+    count = rows
+    if method.resistances is not None:
+        asked = ("arrangement", "transverse_pitch_ratio", "longitudinal_pitch_ratio", "rows")
+        count = np.asarray(method.resistances(**{name: values[name] for name in asked}))
+    heads = loss * count
+    if method.fixed_loss is not None:
+        names = (*method.inputs, *(name for name in method.options if name in values))
+        heads = heads + method.fixed_loss(**{name: values[name] for name in names})
+    friction = heads / rows * flux**2 / (2.0 * here.density_kg_m3)
+    return np.broadcast_to(loss, bulk.shape), values["reynolds"], np.broadcast_to(friction, bulk.shape)
 
 
 def secant_heat_capacity(medium: Medium, first: Array, second: Array, pressure: Array, here: State) -> Array:

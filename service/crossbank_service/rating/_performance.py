@@ -1,11 +1,11 @@
 """What a rating found, case by case: one set of arrays whether the bank was resolved by rows or lumped."""
 
-from dataclasses import dataclass
+from dataclasses import dataclass, fields
 
 import numpy as np
 
 from crossbank_service.rating import _single_phase
-from crossbank_service.rating._arrays import Array, Cases, spread
+from crossbank_service.rating._arrays import Array, Cases
 from crossbank_service.rating._condensing import CondensingFilm, CondensingStream
 from crossbank_service.rating._lumped import Lump
 from crossbank_service.rating._outside import mass_flux, temperature_of
@@ -30,6 +30,8 @@ class OutsideFound(Cases):
     max_velocity: Array
     reynolds: Array
     coefficient: Array
+    fin_efficiency: Array
+    surface_efficiency: Array
     bulk_min: Array
     bulk_max: Array
     face_min: Array
@@ -101,6 +103,7 @@ class WallFound(Cases):
     highest_row: Array
     lowest_inner: Array
     highest_inner: Array
+    fin_tip_highest: Array
 
 
 @dataclass(frozen=True)
@@ -163,7 +166,8 @@ def of_solution(problem: Problem, found: Solution) -> Performance:
                 _high(np.maximum(field.outside_in, field.outside_out)),
             ]
         ),
-        faces=found.walls.outside_film,
+        faces=found.walls,
+        resistances=found.resistances,
     )
     inside = _inside_of_solution(problem, found)
     given_off = heat.sum(axis=(1, 2))
@@ -206,7 +210,7 @@ def of_solution(problem: Problem, found: Solution) -> Performance:
         overall=_overall(
             problem, duty, ua, found.resistances, heat, outside, inside, _low(np.minimum.reduce(corners))
         ),
-        wall=_walls(found.walls),
+        wall=_walls(found.walls, _tips(problem, found.resistances, found.walls)),
         rows=rows,
         residual=np.abs(duty - given_off) / scale,
         iterations=found.iterations,
@@ -229,7 +233,8 @@ def of_lump(problem: Problem, found: Lump) -> Performance:
         reynolds=found.outside_reynolds,
         coefficient=found.outside_coefficient,
         bulk=np.stack([ends.min(axis=0), ends.max(axis=0)]),
-        faces=found.walls.outside_film[:, None],
+        faces=Faces(*(getattr(found.walls, f.name)[:, None] for f in fields(Faces))),
+        resistances=Resistances(*(getattr(found.resistances, f.name)[:, None] for f in fields(Resistances))),
     )
     inside = _inside_of_lump(problem, found)
     heat = found.duty[:, None]
@@ -237,21 +242,19 @@ def of_lump(problem: Problem, found: Lump) -> Performance:
     outlet = found.inside_outlet
     terminals = np.abs(np.stack([inlet - found.outside_outlet, outlet - stream.inlet_temperature]))
     lumped = Resistances(
-        *(np.broadcast_to(getattr(found.resistances, name), found.duty.shape)[:, None] for name in SHARES)
+        *(
+            np.broadcast_to(getattr(found.resistances, f.name), found.duty.shape)[:, None]
+            for f in fields(Resistances)
+        )
     )
+    cells = Faces(*(getattr(found.walls, f.name)[:, None, None] for f in fields(Faces)))
+    spread_r = Resistances(*(getattr(lumped, f.name)[:, :, None] for f in fields(Resistances)))
     return Performance(
         duty=found.duty,
         outside=outside,
         inside=inside,
         overall=_overall(problem, found.duty, found.ua, lumped, heat, outside, inside, terminals.min(axis=0)),
-        wall=_walls(
-            Faces(
-                *(
-                    getattr(found.walls, n)[:, None, None]
-                    for n in ("inside_film", "inner_metal", "outer_metal", "outside_film")
-                )
-            )
-        ),
+        wall=_walls(cells, _tips(problem, spread_r, cells)),
         rows=None,
         residual=np.zeros_like(found.duty),
         iterations=found.iterations,
@@ -270,7 +273,8 @@ def _outside(
     reynolds: Array,
     coefficient: Array,
     bulk: Array,
-    faces: Array,
+    faces: Faces,
+    resistances: Resistances,
 ) -> OutsideFound:
     stream = problem.outside
     inlet_density = stream.medium.at(stream.inlet_temperature, stream.inlet_pressure).density_kg_m3
@@ -282,13 +286,15 @@ def _outside(
         friction_drop=friction,
         momentum_drop=momentum,
         approach_velocity=stream.mass_flow / (inlet_density * problem.bank.face_area),
-        max_velocity=mass_flux(problem.bank, stream) / density,
+        max_velocity=np.max([mass_flux(s, stream) for s in problem.sections], axis=0) / density,
         reynolds=reynolds,
         coefficient=coefficient,
         bulk_min=bulk[0],
         bulk_max=bulk[1],
-        face_min=_low(faces),
-        face_max=_high(faces),
+        fin_efficiency=_finned_mean(problem, resistances.fin_efficiency),
+        surface_efficiency=resistances.surface_efficiency.reshape(len(outlet), -1).mean(axis=1),
+        face_min=np.minimum(_low(faces.outside_film), _low(faces.fin_root)),
+        face_max=np.maximum(_high(faces.outside_film), _high(faces.fin_root)),
         choked=(friction + momentum > 0.5 * stream.inlet_pressure).astype(np.float64),
     )
 
@@ -418,8 +424,7 @@ def _inside_of_lump(problem: Problem, found: Lump) -> InsideFound | None:
 
 
 def _conductance(problem: Problem, r: Resistances, like: Array) -> Array:
-    area = problem.bank.outside_area / (like[0].size)
-    return np.broadcast_to(spread(area, like) / r.total, like.shape)
+    return np.broadcast_to(_cell_area(problem, like) / r.total, like.shape)
 
 
 def _overall(
@@ -432,7 +437,7 @@ def _overall(
     inside: InsideFound | None,
     closest: Array,
 ) -> OverallFound:
-    stream, area = problem.outside, problem.bank.outside_area
+    stream, area = problem.outside, problem.outside_area
     inlet = _inside_inlet(problem)
     inside_out = (
         inside.outlet_temperature if isinstance(problem.inside, SinglePhaseStream) and inside else inlet
@@ -441,7 +446,7 @@ def _overall(
     cold_end = inside_out - stream.inlet_temperature
     log_mean = _log_mean(hot_end, cold_end)
     mean = np.abs(duty) / ua
-    clean = np.broadcast_to(spread(area / heat[0].size, heat) / r.clean, heat.shape)
+    clean = np.broadcast_to(_cell_area(problem, heat) / r.clean, heat.shape)
     p_in = stream.inlet_pressure
     medium = stream.medium
     greatest = stream.mass_flow * np.abs(
@@ -511,7 +516,40 @@ def _log_mean(first: Array, second: Array) -> Array:
     return np.where(cross, np.nan, mean)
 
 
-def _walls(walls: Faces) -> WallFound:
+def _cell_area(problem: Problem, like: Array) -> Array:
+    if like.ndim == 2:  # a lumped bank is one cell
+        return problem.outside_area[:, None]
+    return np.asarray(problem.wall.area / like.shape[2])
+
+
+def _finned_mean(problem: Problem, efficiency: Array) -> Array:
+    """Mean fin efficiency over the finned rows; 1 where there are none."""
+    n = efficiency.shape[0]
+    if efficiency.shape[1] < problem.circuit.rows:
+        return np.asarray(efficiency.reshape(n, -1).mean(axis=1))
+    finned = [s for s in problem.sections if s.bank.fins is not None] or list(problem.sections)
+    values = [efficiency[:, s.rows].reshape(n, -1) for s in finned]
+    return np.asarray(np.concatenate(values, axis=1).mean(axis=1))
+
+
+def _tips(problem: Problem, r: Resistances, walls: Faces) -> Array:
+    """Highest temperature of the fin tips [K], (N,); that of the roots where they are hotter."""
+    highest = []
+    for s in problem.sections:
+        if s.bank.fins is None:
+            continue
+        film = 1.0 / (r.film + r.outside_fouling * r.surface_efficiency)[:, s.rows]
+        film = np.broadcast_to(film, walls.fin_root[:, s.rows].shape)
+        fin, root = walls.fin_mean[:, s.rows], walls.fin_root[:, s.rows]
+        efficiency = np.broadcast_to(r.fin_efficiency, walls.fin_root.shape)[:, s.rows]
+        # the mean of the fins lies between stream and root by the efficiency
+        below = 1.0 - efficiency
+        stream = np.where(below > 1e-9, (fin - efficiency * root) / np.where(below > 1e-9, below, 1.0), root)
+        highest.append(_high(stream + s.tip_ratio(film, fin) * (root - stream)))
+    return np.max(highest, axis=0) if highest else np.zeros(walls.fin_root.shape[0])
+
+
+def _walls(walls: Faces, tips: Array) -> WallFound:
     n, rows = walls.outer_metal.shape[:2]
     lowest, highest = [], []
     for surface in (walls.outer_metal, walls.inner_metal):
@@ -528,4 +566,5 @@ def _walls(walls: Faces) -> WallFound:
         highest_row=(at_high % rows + 1).astype(np.float64),
         lowest_inner=(at_low >= rows).astype(np.float64),
         highest_inner=(at_high >= rows).astype(np.float64),
+        fin_tip_highest=tips,
     )

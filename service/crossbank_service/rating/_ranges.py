@@ -44,26 +44,27 @@ def _judge(method: Method, values: dict[str, Array]) -> ArrayRange:
     return ArrayRange(method, np.asarray(within.reshape(within.shape[0], -1).all(axis=1)), notes)
 
 
-def ranges(problem: Problem, found: Solution | Lump) -> dict[str, ArrayRange]:
-    """Ranges of the methods behind a rating, by role."""
-    stream, bank = problem.outside, problem.bank
+def ranges(problem: Problem, found: Solution | Lump) -> list[ArrayRange]:
+    """Ranges of the methods behind a rating; several a role where the bank has row groups."""
+    stream = problem.outside
     if isinstance(found, Solution):
         bulk = 0.5 * (found.field.outside_in + found.field.outside_out)
-        face = found.walls.outside_film
+        face, fin = found.walls.outside_film, found.walls.fin_mean
     else:
         bulk = (0.5 * (stream.inlet_temperature + found.outside_outlet))[:, None]
-        face = found.walls.outside_film[:, None]
+        face, fin = found.walls.outside_film[:, None], found.walls.fin_mean[:, None]
     pressure = spread(stream.inlet_pressure, bulk)
-    face = np.broadcast_to(face, bulk.shape)
-    values = _outside.film_values(bank, stream, bulk, face, pressure)
-    out = {"outside_heat_transfer": _judge(stream.heat_method, values)}
-    drop_values = _outside.layout_values(bank, stream.medium, found.drop.reynolds)
-    drop_values["reynolds"] = found.drop.reynolds
-    out["outside_pressure_drop"] = _judge(stream.drop_method, drop_values)
+    out: list[ArrayRange] = []
+    for s in problem.sections:
+        at = (bulk[:, s.rows], face[:, s.rows], pressure, fin[:, s.rows])
+        out.append(_judge(s.heat_method, _outside.film_values(s, stream, *at)))
+    for s in problem.sections:
+        reynolds = found.drop.reynolds[:, s.rows]
+        values = _outside.layout_values(s, stream.medium, reynolds)
+        out.append(_judge(s.drop_method, {**values, "reynolds": reynolds}))
     inside = _inside_values(problem, found)
     if inside is not None and isinstance(problem.inside, CondensingStream | SinglePhaseStream):
-        out["inside_heat_transfer"] = _judge(problem.inside.heat_method, inside)
-        out["inside_pressure_drop"] = _judge(problem.inside.drop_method, inside)
+        out += [_judge(m, inside) for m in (problem.inside.heat_method, problem.inside.drop_method)]
     return out
 
 

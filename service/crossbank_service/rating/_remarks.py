@@ -10,6 +10,7 @@ from crossbank_service.rating._case import Case, FluidInput
 from crossbank_service.rating._performance import InsideFound, OutsideFound, Performance
 from crossbank_service.rating._ranges import MethodRange
 from crossbank_service.rating._report import one
+from crossbank_service.rating._surface_door import half_gap
 from crossbank_service.rating.notices import NOTICES
 
 VAPOUR_PRESSURE_SHARE = 0.1
@@ -21,7 +22,7 @@ def notice(code: str, text: str | None = None, pointer: str | None = None) -> No
     return Notice(code=code, severity=kind.severity, text=text or kind.meaning, pointer=pointer)
 
 
-def remarks(case: Case, found: Performance, used: dict[str, MethodRange]) -> list[Notice]:
+def remarks(case: Case, found: Performance, used: tuple[MethodRange, ...]) -> list[Notice]:
     """All notices of a case."""
     out = []
     if case.idle:
@@ -30,13 +31,13 @@ def remarks(case: Case, found: Performance, used: dict[str, MethodRange]) -> lis
     out += _layout_remarks(case)
     if case.outside_flow:
         out += [
-            notice("method-out-of-range", each.note, f"/methods/{role}")
-            for role, each in used.items()
+            notice("method-out-of-range", each.note, f"/methods/{each.method.role}")
+            for each in used
             if not each.within and not case.idle
         ]
         out += [
-            notice("method-doubt", f"{each.method.slug}: {each.method.doubt}", f"/methods/{role}")
-            for role, each in used.items()
+            notice("method-doubt", f"{each.method.slug}: {each.method.doubt}", f"/methods/{each.method.role}")
+            for each in used
             if each.method.doubt
         ]
     out.append(notice("estimate"))
@@ -50,8 +51,7 @@ def _idle_pointer(case: Case) -> str | None:
 
 
 def _layout_remarks(case: Case) -> list[Notice]:
-    half = 0.5 * (case.bank["transverse_pitch"] - case.bank["outer_diameter"])
-    if case.bank["side_gap"] > 1.05 * half:
+    if case.bank["side_gap"] > 1.05 * half_gap(case.sections[0]):
         return [notice("side-gap-bypass", pointer="/bank/layout/side_gap_m")]
     return []
 

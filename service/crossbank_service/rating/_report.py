@@ -2,8 +2,6 @@
 
 import math
 
-import numpy as np
-
 from crossbank.contract import (
     Assumed,
     GeometryResult,
@@ -29,6 +27,7 @@ from crossbank_service.banks import TubeBank
 from crossbank_service.properties import psychrometrics
 from crossbank_service.rating._arrays import Array
 from crossbank_service.rating._case import Case
+from crossbank_service.rating._engine import bank_of
 from crossbank_service.rating._performance import SHARES, Performance
 from crossbank_service.rating._ranges import MethodRange
 
@@ -44,10 +43,12 @@ def some(values: Array) -> float | None:
     return value if math.isfinite(value) else None
 
 
-def result(case: Case, found: Performance, used: dict[str, MethodRange], notices: list[Notice]) -> RateResult:
+def result(
+    case: Case, found: Performance, used: tuple[MethodRange, ...], notices: list[Notice]
+) -> RateResult:
     """The answer to a case from its performance (arrays of one case)."""
     request = case.request
-    bank = TubeBank(**{name: np.array([value]) for name, value in case.bank.items()})
+    banks = [bank_of([section]) for section in case.sections]
     duty = 0.0 if case.idle else one(found.duty)
     return RateResult(
         label=request.label,
@@ -57,11 +58,11 @@ def result(case: Case, found: Performance, used: dict[str, MethodRange], notices
         latent_duty_w=0.0,
         outside=_outside(case, found),
         inside=_inside(case, found),
-        overall=_overall(case, found, bank),
-        geometry=_geometry(case, found, bank),
+        overall=_overall(case, found, banks),
+        geometry=_geometry(case, found, banks),
         wall=_wall(case, found),
         rows=_rows(case, found) if given(given(request.detail).rows) else [],
-        methods=[_method(role, each) for role, each in used.items()],
+        methods=[_method(each) for each in used],
         assumed=_assumed(case),
         notices=notices,
         comparisons=None,
@@ -86,9 +87,9 @@ def record(request: RateRequest) -> Record:
     )
 
 
-def _method(role: str, used: MethodRange) -> MethodUsed:
+def _method(used: MethodRange) -> MethodUsed:
     return MethodUsed(
-        role=role,
+        role=used.method.role,
         method=used.method.slug,
         source=used.method.source,
         in_range=used.within,
@@ -123,8 +124,8 @@ def _outside(case: Case, found: Performance) -> OutsideResult:
         max_velocity_m_s=0.0 if still else one(o.max_velocity),
         reynolds_max=0.0 if still else one(o.reynolds),
         heat_transfer_coefficient_w_m2_k=None if case.idle else one(o.coefficient),
-        fin_efficiency=None,
-        surface_efficiency=1.0,
+        fin_efficiency=one(o.fin_efficiency) if case.finned and not case.idle else None,
+        surface_efficiency=None if case.idle else one(o.surface_efficiency),
         flow_power_w=case.outside_flow / density * (friction + momentum),
         outlet_humidity_ratio=w,
         outlet_relative_humidity=None
@@ -180,8 +181,8 @@ def _empty_inside(kind: str, held: float | None) -> InsideResult:
     )
 
 
-def _overall(case: Case, found: Performance, bank: TubeBank) -> OverallResult:
-    area = one(bank.outside_area)
+def _overall(case: Case, found: Performance, banks: list[TubeBank]) -> OverallResult:
+    area = sum(one(bank.outside_area) for bank in banks)
     o = found.overall
     if case.idle:
         return OverallResult(
@@ -217,21 +218,25 @@ def _overall(case: Case, found: Performance, bank: TubeBank) -> OverallResult:
     )
 
 
-def _geometry(case: Case, found: Performance, bank: TubeBank) -> GeometryResult:
-    area, volume = one(bank.outside_area), one(bank.inside_volume)
-    metal = one(bank.metal_mass) if case.bank["tube_density"] else None
+def _geometry(case: Case, found: Performance, banks: list[TubeBank]) -> GeometryResult:
+    def total(name: str) -> float:
+        return sum(one(getattr(bank, name)) for bank in banks)
+
+    masses = [one(bank.metal_mass) for bank in banks]
+    metal = sum(masses) if all(masses) else None
+    volume = total("inside_volume")
     filling = 0.0 if found.inside is None else one(found.inside.density) * volume
     return GeometryResult(
-        tube_count=int(one(bank.tube_count)),
-        width_m=one(bank.width),
+        tube_count=round(total("tube_count")),
+        width_m=one(banks[0].width),
         height_m=case.bank["tube_length"],
-        depth_m=one(bank.depth),
-        face_area_m2=one(bank.face_area),
-        free_flow_area_m2=one(bank.free_area),
-        outside_area_m2=area,
-        bare_area_m2=area,
-        fin_area_m2=0.0,
-        inside_area_m2=one(bank.inside_area),
+        depth_m=one(banks[0].depth),
+        face_area_m2=one(banks[0].face_area),
+        free_flow_area_m2=min(one(bank.free_area) for bank in banks),
+        outside_area_m2=total("outside_area"),
+        bare_area_m2=total("bare_area"),
+        fin_area_m2=total("fin_area"),
+        inside_area_m2=total("inside_area"),
         inside_volume_m3=volume,
         dry_mass_kg=metal,
         operating_mass_kg=None if metal is None else metal + filling,
@@ -256,7 +261,7 @@ def _wall(case: Case, found: Performance) -> WallResult:
         max_temperature_k=one(w.highest),
         min_at=WallPlace(row=int(one(w.lowest_row)), face=faces[int(one(w.lowest_inner))]),
         max_at=WallPlace(row=int(one(w.highest_row)), face=faces[int(one(w.highest_inner))]),
-        fin_tip_max_temperature_k=None,
+        fin_tip_max_temperature_k=one(w.fin_tip_highest) if case.finned else None,
     )
 
 

@@ -6,19 +6,20 @@ does not depend on the cases beside it.
 """
 
 from dataclasses import dataclass
+from functools import cached_property
 
 import numpy as np
 
 from crossbank_service.banks import TubeBank
-from crossbank_service.properties import Curve
 from crossbank_service.rating import _condensing, _outside, _single_phase
 from crossbank_service.rating._arrays import Array, Cases, Index, spread
 from crossbank_service.rating._circuit import Circuit
 from crossbank_service.rating._condensing import CondensingFilm, CondensingStream
 from crossbank_service.rating._network import Field, solve_known_inside
 from crossbank_service.rating._outside import OutsideDrop, OutsideFilm, OutsideStream
+from crossbank_service.rating._section import Section
 from crossbank_service.rating._single_phase import SinglePhaseFilm, SinglePhaseStream
-from crossbank_service.rating._wall import Faces, Resistances, faces, wall_resistance
+from crossbank_service.rating._wall import Faces, Resistances, Wall, faces, in_series
 
 MAX_ITERATIONS = 300
 DUTY_TOLERANCE = 1e-9
@@ -44,8 +45,7 @@ InsideFilm = CondensingFilm | SinglePhaseFilm | None
 class Problem(Cases):
     """N banks of one shape with their streams: everything a rating needs."""
 
-    bank: TubeBank
-    metal: Curve
+    sections: tuple[Section, ...]
     outside: OutsideStream
     inside: InsideStream
     circuit: Circuit
@@ -55,6 +55,21 @@ class Problem(Cases):
     def cases(self) -> int:
         """How many."""
         return len(self.outside.mass_flow)
+
+    @property
+    def bank(self) -> TubeBank:
+        """The first rows' bank: layout and bore are those of all rows."""
+        return self.sections[0].bank
+
+    @cached_property
+    def wall(self) -> Wall:
+        """The walls of all rows."""
+        return Wall.of(self.sections)
+
+    @property
+    def outside_area(self) -> Array:
+        """All outside surface [m2], (N,)."""
+        return np.asarray(self.wall.area[:, :, 0].sum(axis=1))
 
 
 @dataclass(frozen=True)
@@ -175,9 +190,7 @@ def _start(problem: Problem) -> Iterate:
     warm = np.broadcast_to(inside[:, None, None], shape).copy()
     middle = 0.5 * (cold + warm)
     outside_pressure = np.repeat(problem.outside.inlet_pressure[:, None], rows + 1, axis=1)
-    film = _outside.film(
-        problem.bank, problem.outside, cold, middle, outside_pressure[:, :-1, None], _row_numbers(problem)
-    )
+    film = _film_by_rows(problem, cold, Faces.at(middle), outside_pressure[:, :-1, None])
     # a first heat from the outside film alone gives the condensing march a flow to start from
     c_outside = _capacity_outside(problem, cold, cold, outside_pressure)
     area = _cell_area(problem, cold)
@@ -186,7 +199,7 @@ def _start(problem: Problem) -> Iterate:
     )
     return Iterate(
         field=field,
-        walls=Faces(middle, middle, middle, middle),
+        walls=Faces.at(middle),
         outside_film=Film.first(np.log(film.coefficient)),
         inside_film=None,
         outside_pressure=outside_pressure,
@@ -198,7 +211,7 @@ def _start(problem: Problem) -> Iterate:
 
 
 def _cell_area(problem: Problem, like: Array) -> Array:
-    return spread(problem.bank.outside_area / (problem.bank.rows * problem.segments), like)
+    return np.broadcast_to(problem.wall.area / problem.segments, like.shape)
 
 
 def _capacity_outside(problem: Problem, first: Array, second: Array, pressure: Array) -> Array:
@@ -212,8 +225,30 @@ def _capacity_outside(problem: Problem, first: Array, second: Array, pressure: A
 def _outside_film(problem: Problem, now: Iterate) -> OutsideFilm:
     bulk = 0.5 * (now.field.outside_in + now.field.outside_out)
     pressure = 0.5 * (now.outside_pressure[:, 1:] + now.outside_pressure[:, :-1])[:, :, None]
-    return _outside.film(
-        problem.bank, problem.outside, bulk, now.walls.outside_film, pressure, _row_numbers(problem)
+    return _film_by_rows(problem, bulk, now.walls, pressure)
+
+
+def _film_by_rows(problem: Problem, bulk: Array, walls: Faces, pressure: Array) -> OutsideFilm:
+    numbers = np.broadcast_to(_row_numbers(problem), (1, problem.circuit.rows, 1))
+    parts = [
+        _outside.film(
+            s,
+            problem.outside,
+            bulk[:, s.rows],
+            walls.outside_film[:, s.rows],
+            pressure[:, s.rows],
+            walls.fin_mean[:, s.rows],
+            numbers[:, s.rows],
+        )
+        for s in problem.sections
+    ]
+    if len(parts) == 1:
+        return parts[0]
+    return OutsideFilm(
+        *(
+            np.concatenate([getattr(part, name) for part in parts], axis=1)
+            for name in ("coefficient", "reynolds", "prandtl")
+        )
     )
 
 
@@ -223,7 +258,7 @@ def _outside_drop(problem: Problem, now: Iterate) -> OutsideDrop:
         [now.field.outside_in[:, :1].mean(axis=2), now.field.outside_out.mean(axis=2)], axis=1
     )
     face = now.walls.outside_film.mean(axis=2)
-    return _outside.drop(problem.bank, problem.outside, bulk, face, ends, now.outside_pressure)
+    return _outside.drop(problem.sections, problem.outside, bulk, face, ends, now.outside_pressure)
 
 
 def _inside_film(problem: Problem, now: Iterate) -> InsideFilm:
@@ -243,21 +278,11 @@ def _inside_film(problem: Problem, now: Iterate) -> InsideFilm:
 
 
 def _resistances(problem: Problem, now: Iterate, outside: Film, inside: Film | None) -> Resistances:
-    like = now.field.heat
-    nothing = np.zeros((problem.cases, 1, 1))
-    fouling = spread(problem.outside.fouling, like)
-    if isinstance(problem.inside, HeldSurface) or inside is None:
-        return Resistances(1.0 / outside.coefficient, fouling, nothing, nothing, nothing, nothing)
-    ratio = spread(problem.bank.outside_area / problem.bank.inside_area, like)
-    wall = wall_resistance(problem.bank, problem.metal, 0.5 * (now.walls.inner_metal + now.walls.outer_metal))
-    return Resistances(
-        outside=1.0 / outside.coefficient,
-        outside_fouling=fouling,
-        fin_bond=nothing,
-        wall=wall,
-        inside_fouling=ratio * spread(problem.inside.fouling, like),
-        inside=ratio / inside.coefficient,
-    )
+    within = None
+    if inside is not None and not isinstance(problem.inside, HeldSurface):
+        within = inside.coefficient, spread(problem.inside.fouling, now.field.heat)
+    fouling = spread(problem.outside.fouling, now.field.heat)
+    return in_series(problem.sections, problem.wall, outside.coefficient, fouling, now.walls, within)
 
 
 def _balance(problem: Problem, film: InsideFilm, ua: Array, c_outside: Array) -> Field:
