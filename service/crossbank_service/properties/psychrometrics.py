@@ -155,6 +155,22 @@ def _vapour_gain(temperature_k: Array) -> Array:
     return np.asarray(gain.reshape(t.shape) * R / WATER.molar_mass_kg_mol)
 
 
+def vapour_enthalpy(temperature_k: ArrayLike) -> Array:
+    """Enthalpy of low-density water vapour above liquid at the triple point [J/kg]."""
+    return np.asarray(_HEAT_OF_VAPORISATION + _vapour_gain(_array(temperature_k)))
+
+
+def vapour_heat_capacity(temperature_k: ArrayLike) -> Array:
+    """Heat capacity of low-density water vapour, the slope of ``vapour_enthalpy`` [J/(kg K)]."""
+    t = np.maximum(_array(temperature_k), LOWEST_DEW_POINT_K)
+    return np.asarray(WATER.heat_capacity.over_r(t) * R / WATER.molar_mass_kg_mol)
+
+
+def condensate_enthalpy(temperature_k: ArrayLike) -> Array:
+    """Enthalpy of liquid water above the triple point, by a mean heat capacity [J/kg]."""
+    return np.asarray(_WATER_HEAT_CAPACITY * (_array(temperature_k) - TRIPLE_K))
+
+
 def humidity_ratio_from_wet_bulb(
     temperature_k: ArrayLike, wet_bulb_temperature_k: ArrayLike, pressure_pa: ArrayLike
 ) -> Array:

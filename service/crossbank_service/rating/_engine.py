@@ -9,7 +9,8 @@ import numpy as np
 
 from crossbank_service import properties
 from crossbank_service.banks import FinSet, TubeBank
-from crossbank_service.properties import Medium
+from crossbank_service.properties import Medium, psychrometrics
+from crossbank_service.properties.moist_air import MASS_RATIO
 from crossbank_service.rating import _lumped, _performance, _solver
 from crossbank_service.rating._arrays import Array
 from crossbank_service.rating._case import Case, FluidInput, InsideInput, SectionInput, narrow
@@ -22,6 +23,7 @@ from crossbank_service.rating._ranges import ArrayRange, MethodRange, ranges
 from crossbank_service.rating._section import Section
 from crossbank_service.rating._single_phase import SinglePhaseStream
 from crossbank_service.rating._solver import HeldSurface, InsideStream, Problem
+from crossbank_service.rating._wet import Moisture
 
 CELLS_PER_CHUNK = 16_000
 """Arrays of this many numbers stay in a core's cache, and one chunk takes a few tens of milliseconds."""
@@ -88,11 +90,28 @@ def problem_of(cases: Sequence[Case]) -> Problem:
         inside=_inside(cases),
         circuit=first.circuit,
         segments=first.segments,
+        moisture=_moisture(cases),
     )
 
 
 def _column(cases: Sequence[Case], name: str) -> Array:
     return np.array([getattr(case, name) for case in cases])
+
+
+def _moisture(cases: Sequence[Case]) -> Moisture | None:
+    """The vapour in the outside streams; None where no case has a surface that could be below its dew point."""
+    wet = [w or 0.0 for w in (case.humidity_ratio for case in cases)]
+    humidity, pressure = np.array(wet), _column(cases, "outside_pressure")
+    coldest = np.array([min(case.inside.temperature, case.outside_temperature) for case in cases])
+    possible = (humidity > 0.0) & (coldest < psychrometrics.dew_point(humidity, pressure))
+    if not possible.any():
+        return None
+    flow = _column(cases, "outside_flow")
+    return Moisture(
+        dry_flow=flow / (1.0 + humidity),
+        humidity=humidity,
+        molar_ratio=np.full_like(flow, MASS_RATIO),
+    )
 
 
 def _distinct(used: list[MethodRange]) -> tuple[MethodRange, ...]:

@@ -4,6 +4,7 @@ from dataclasses import dataclass, fields
 
 import numpy as np
 
+from crossbank_service.properties import psychrometrics
 from crossbank_service.rating import _single_phase
 from crossbank_service.rating._arrays import Array, Cases
 from crossbank_service.rating._condensing import CondensingFilm, CondensingStream
@@ -107,10 +108,24 @@ class WallFound(Cases):
 
 
 @dataclass(frozen=True)
+class WetFound(Cases):
+    """Moisture of a bank, (N,) and by rows (N, rows); [W], [kg/s], humidity ratio of the outlet."""
+
+    latent: Array
+    removed: Array
+    fog: Array
+    outlet_humidity: Array
+    row_wet: Array
+    row_condensate: Array
+    frost: Array
+
+
+@dataclass(frozen=True)
 class Performance(Cases):
     """Everything a result is made of."""
 
     duty: Array
+    wet: WetFound | None
     outside: OutsideFound
     inside: InsideFound | None
     overall: OverallFound
@@ -151,6 +166,9 @@ def of_solution(problem: Problem, found: Solution) -> Performance:
     enthalpy = stream.medium.enthalpy(leaving, p_in[:, None]).mean(axis=1)
     outlet = temperature_of(stream.medium, enthalpy, leaving.mean(axis=1), p_in)
     duty = stream.mass_flow * (enthalpy - stream.medium.enthalpy(stream.inlet_temperature, p_in))
+    wet = _wet_found(problem, found)
+    if wet is not None:
+        duty = duty - _vapour_lost(problem, found)
     outside = _outside(
         problem,
         outlet=outlet,
@@ -205,10 +223,11 @@ def of_solution(problem: Problem, found: Solution) -> Performance:
     ua = _conductance(problem, found.resistances, heat).sum(axis=(1, 2))
     return Performance(
         duty=duty,
+        wet=wet,
         outside=outside,
         inside=inside,
         overall=_overall(
-            problem, duty, ua, found.resistances, heat, outside, inside, _low(np.minimum.reduce(corners))
+            problem, duty, ua, found.resistances, heat, outside, inside, _low(np.minimum.reduce(corners)), wet
         ),
         wall=_walls(found.walls, _tips(problem, found.resistances, found.walls)),
         rows=rows,
@@ -251,15 +270,52 @@ def of_lump(problem: Problem, found: Lump) -> Performance:
     spread_r = Resistances(*(getattr(lumped, f.name)[:, :, None] for f in fields(Resistances)))
     return Performance(
         duty=found.duty,
+        wet=None,
         outside=outside,
         inside=inside,
-        overall=_overall(problem, found.duty, found.ua, lumped, heat, outside, inside, terminals.min(axis=0)),
+        overall=_overall(
+            problem, found.duty, found.ua, lumped, heat, outside, inside, terminals.min(axis=0), None
+        ),
         wall=_walls(cells, _tips(problem, spread_r, cells)),
         rows=None,
         residual=np.zeros_like(found.duty),
         iterations=found.iterations,
         change=found.change,
     )
+
+
+def _wet_found(problem: Problem, found: Solution) -> WetFound | None:
+    w, moisture = found.wetness, problem.moisture
+    if w is None or moisture is None:
+        return None
+    condensed = w.condensed.sum(axis=2)
+    return WetFound(
+        latent=w.latent.sum(axis=(1, 2)),
+        removed=condensed.sum(axis=1),
+        fog=w.fog.sum(axis=(1, 2)),
+        outlet_humidity=w.leaving[:, -1].mean(axis=1),
+        row_wet=(condensed > 0.0).astype(np.float64),
+        row_condensate=condensed,
+        frost=_high(w.frost),
+    )
+
+
+def _vapour_lost(problem: Problem, found: Solution) -> Array:
+    """Enthalpy that vapour takes out of the stream, less that of its condensate and fog [W].
+
+    The stream is followed to its outlet with all the vapour of the inlet; what it has lost by then is taken out at the
+    outlet temperature, condensate at the temperature of its surface, fog at that of the cell it formed in.
+    """
+    w, moisture, field = found.wetness, problem.moisture, found.field
+    assert w is not None
+    assert moisture is not None
+    dry = moisture.dry_flow / field.outside_in.shape[2]
+    last = field.outside_out[:, -1]
+    lost = dry[:, None] * (moisture.humidity[:, None] - w.leaving[:, -1])
+    vapour = (lost * psychrometrics.vapour_enthalpy(last)).sum(axis=1)
+    liquid = w.condensed * psychrometrics.condensate_enthalpy(w.surface)
+    mist = w.fog * psychrometrics.condensate_enthalpy(w.surface)
+    return np.asarray(vapour - liquid.sum(axis=(1, 2)) - mist.sum(axis=(1, 2)))
 
 
 def _outside(
@@ -436,6 +492,7 @@ def _overall(
     outside: OutsideFound,
     inside: InsideFound | None,
     closest: Array,
+    wet: WetFound | None,
 ) -> OverallFound:
     stream, area = problem.outside, problem.outside_area
     inlet = _inside_inlet(problem)
@@ -474,6 +531,10 @@ def _overall(
         c_min = np.minimum(c_min, c_inside)
     exists = greatest > 0.0
     effectiveness = np.where(exists, np.abs(duty) / np.where(exists, greatest, 1.0), np.nan)
+    ntu = ua / c_min
+    if wet is not None:  # both are defined for a dry stream
+        effectiveness = np.where(wet.removed > 0.0, np.nan, effectiveness)
+        ntu = np.where(wet.removed > 0.0, np.nan, ntu)
     weight = np.abs(heat)
     weight = np.where(
         weight.reshape(len(duty), -1).sum(axis=1).reshape(-1, *[1] * (heat.ndim - 1)) > 0.0, weight, 1.0
@@ -493,7 +554,7 @@ def _overall(
         mean_difference=mean,
         correction=mean / log_mean,
         effectiveness=effectiveness,
-        ntu=ua / c_min,
+        ntu=ntu,
         closest_approach=closest,
         shares=parts / parts.sum(axis=1, keepdims=True),
     )

@@ -7,7 +7,7 @@ from crossbank_service import properties
 from crossbank_service.properties import psychrometrics
 from crossbank_service.properties.moist_air import TEMPERATURE_LIMITS_K as MOIST_AIR_LIMITS_K
 from crossbank_service.rating._case import Case, FluidInput
-from crossbank_service.rating._performance import InsideFound, OutsideFound, Performance
+from crossbank_service.rating._performance import InsideFound, OutsideFound, Performance, WetFound
 from crossbank_service.rating._ranges import MethodRange
 from crossbank_service.rating._report import one
 from crossbank_service.rating._surface_door import half_gap
@@ -64,7 +64,7 @@ def _fluid_remarks(case: Case, found: Performance) -> list[Notice]:
     if case.humidity_ratio is not None:
         dew = float(psychrometrics.dew_point(case.humidity_ratio, case.outside_pressure))
         coldest = one(o.face_min)
-        if coldest < dew:
+        if found.wet is None and coldest < dew:
             out.append(
                 notice(
                     "surface-below-dew-point",
@@ -73,6 +73,8 @@ def _fluid_remarks(case: Case, found: Performance) -> list[Notice]:
                     "/outside/fluid",
                 )
             )
+    if found.wet is not None:
+        out += _wet_remarks(found.wet)
     out += _phase_remarks(case.outside_fluid, o, one(o.outlet_pressure), "outside", "/outside/fluid")
     fluid = case.inside.fluid
     if i is not None and fluid is not None and case.inside.kind == "single-phase":
@@ -89,6 +91,23 @@ def _fluid_remarks(case: Case, found: Performance) -> list[Notice]:
                 "/inside/inlet_pressure_pa",
             )
         )
+    return out
+
+
+def _wet_remarks(wet: WetFound) -> list[Notice]:
+    out = []
+    if one(wet.removed) > 0.0:
+        out.append(notice("wet-surface", pointer="/outside/fluid"))
+    if one(wet.fog) > 0.0:
+        out.append(
+            notice(
+                "fog",
+                f"{one(wet.fog):.4g} kg/s of vapour turns to fog in the stream and is carried on with it.",
+                "/outside/fluid",
+            )
+        )
+    if one(wet.frost) > 0.0:
+        out.append(notice("frost", pointer="/outside/fluid"))
     return out
 
 

@@ -50,12 +50,14 @@ def result(
     request = case.request
     banks = [bank_of([section]) for section in case.sections]
     duty = 0.0 if case.idle else one(found.duty)
+    # latent heat is given off by the stream
+    latent = 0.0 if found.wet is None or case.idle else 0.0 - one(found.wet.latent)
     return RateResult(
         label=request.label,
         reference=ReferenceEcho.of(request.reference),
         duty_w=duty,
-        sensible_duty_w=duty,
-        latent_duty_w=0.0,
+        sensible_duty_w=duty - latent,
+        latent_duty_w=latent,
         outside=_outside(case, found),
         inside=_inside(case, found),
         overall=_overall(case, found, banks),
@@ -110,6 +112,9 @@ def _outside(case: Case, found: Performance) -> OutsideResult:
     pressure = case.outside_pressure if still else one(o.outlet_pressure)
     density = one(o.inlet_density)
     w = case.humidity_ratio
+    removed = 0.0
+    if found.wet is not None:
+        w, removed = one(found.wet.outlet_humidity), one(found.wet.removed)
     return OutsideResult(
         mass_flow_kg_s=case.outside_flow,
         inlet_temperature_k=case.outside_temperature,
@@ -131,7 +136,7 @@ def _outside(case: Case, found: Performance) -> OutsideResult:
         outlet_relative_humidity=None
         if w is None
         else float(psychrometrics.relative_humidity(outlet, w, pressure)),
-        moisture_removed_kg_s=None if w is None else 0.0,
+        moisture_removed_kg_s=None if w is None else removed,
     )
 
 
@@ -265,8 +270,16 @@ def _wall(case: Case, found: Performance) -> WallResult:
     )
 
 
+def _condensate(found: Performance, r: int, *, vapour: bool, idle: bool) -> float | None:
+    """Condensate of a row: of the vapour inside, or of the moist stream outside where its surface is wet."""
+    if vapour:
+        assert found.rows is not None
+        return 0.0 if idle else float(found.rows.condensate[0, r])
+    return None if found.wet is None or idle else float(found.wet.row_condensate[0, r])
+
+
 def _rows(case: Case, found: Performance) -> list[RowResult]:
-    rows = found.rows
+    rows, wet = found.rows, found.wet
     if rows is None:
         return []
     still, idle, kind = case.outside_flow == 0.0, case.idle is not None, case.inside.kind
@@ -286,14 +299,14 @@ def _rows(case: Case, found: Performance) -> list[RowResult]:
                 outside_outlet_temperature_k=at(rows.outside_outlet, r),
                 inside_temperature_k=None if idle or kind == "held-surface" else at(rows.inside, r),
                 wall_temperature_k=None if idle else at(rows.wall, r),
-                wet=False,
+                wet=None if case.humidity_ratio is None else wet is not None and bool(wet.row_wet[0, r]),
                 reynolds_max=0.0 if still else at(rows.reynolds, r),
                 outside_heat_transfer_coefficient_w_m2_k=None if idle else at(rows.outside_coefficient, r),
                 inside_heat_transfer_coefficient_w_m2_k=None
                 if idle or kind == "held-surface"
                 else at(rows.inside_coefficient, r),
                 pressure_drop_pa=0.0 if still else at(rows.drop, r),
-                condensate_kg_s=(0.0 if idle else at(rows.condensate, r)) if vapour else None,
+                condensate_kg_s=_condensate(found, r, vapour=vapour, idle=idle),
                 outlet_quality=0.0 if vapour else None,
             )
         )

@@ -5,13 +5,13 @@ temperatures until nothing moves. Each case is relaxed and stopped by its own hi
 does not depend on the cases beside it.
 """
 
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from functools import cached_property
 
 import numpy as np
 
 from crossbank_service.banks import TubeBank
-from crossbank_service.rating import _condensing, _outside, _single_phase
+from crossbank_service.rating import _condensing, _outside, _single_phase, _wet
 from crossbank_service.rating._arrays import Array, Cases, Index, spread
 from crossbank_service.rating._circuit import Circuit
 from crossbank_service.rating._condensing import CondensingFilm, CondensingStream
@@ -20,6 +20,7 @@ from crossbank_service.rating._outside import OutsideDrop, OutsideFilm, OutsideS
 from crossbank_service.rating._section import Section
 from crossbank_service.rating._single_phase import SinglePhaseFilm, SinglePhaseStream
 from crossbank_service.rating._wall import Faces, Resistances, Wall, faces, in_series
+from crossbank_service.rating._wet import Moisture, Wetness
 
 MAX_ITERATIONS = 300
 DUTY_TOLERANCE = 1e-9
@@ -50,6 +51,7 @@ class Problem(Cases):
     inside: InsideStream
     circuit: Circuit
     segments: int
+    moisture: Moisture | None = None
 
     @property
     def cases(self) -> int:
@@ -116,6 +118,8 @@ class Iterate(Cases):
     duty: Array
     resistance_log: Array
     pressure_change: Array
+    resistances: Resistances | None
+    wetness: Wetness | None
 
 
 @dataclass(frozen=True)
@@ -128,6 +132,7 @@ class Solution(Cases):
     outside: OutsideFilm
     drop: OutsideDrop
     inside: InsideFilm
+    wetness: Wetness | None
     iterations: Array
     change: Array
 
@@ -207,6 +212,8 @@ def _start(problem: Problem) -> Iterate:
         duty=field.heat.sum(axis=(1, 2)),
         resistance_log=np.zeros(shape),
         pressure_change=np.full(n, np.inf),
+        resistances=None,
+        wetness=None if problem.moisture is None else _wet.dry(problem.moisture, middle),
     )
 
 
@@ -285,6 +292,26 @@ def _resistances(problem: Problem, now: Iterate, outside: Film, inside: Film | N
     return in_series(problem.sections, problem.wall, outside.coefficient, fouling, now.walls, within)
 
 
+def _wetness(problem: Problem, now: Iterate, dry: Array, capacity: Array) -> Wetness | None:
+    """Moisture of the cells at the last heat balance; None where nothing can condense."""
+    if problem.moisture is None or now.wetness is None or now.resistances is None:
+        return now.wetness
+    plain = replace(now.wetness, capacity_factor=np.ones_like(capacity))
+    return _wet.renew(
+        problem.moisture,
+        problem.outside,
+        now.wetness,
+        now.field,
+        now.walls,
+        now.resistances,
+        dry,
+        problem.wall.prime_share,
+        _cell_area(problem, dry),
+        _wet.capacity_outside(problem.moisture, plain, now.field, capacity),
+        0.5 * (now.outside_pressure[:, 1:] + now.outside_pressure[:, :-1])[:, :, None],
+    )
+
+
 def _balance(problem: Problem, film: InsideFilm, ua: Array, c_outside: Array) -> Field:
     inlet = problem.outside.inlet_temperature
     if isinstance(film, SinglePhaseFilm):
@@ -303,7 +330,14 @@ def _step(
     """One renewal; returns the new iterate, each case's largest change over its tolerance, and its duty change."""
     like = now.field.heat
     weight = spread(relax, like)
-    outside = np.log(_outside_film(problem, now).coefficient)
+    dry = _outside_film(problem, now).coefficient
+    capacity = _capacity_outside(problem, now.field.outside_in, now.field.outside_out, now.outside_pressure)
+    wetness = _wetness(problem, now, dry, capacity)
+    outside = np.log(dry)
+    if wetness is not None:
+        assert problem.moisture is not None
+        outside = outside + np.log(wetness.film_factor)
+        capacity = _wet.capacity_outside(problem.moisture, wetness, now.field, capacity)
     change = np.abs(outside - now.outside_film.log).max(axis=(1, 2)) / FILM_TOLERANCE
     outside_film = now.outside_film.renewed(outside, weight)
 
@@ -332,8 +366,7 @@ def _step(
     resistance = np.log(total)
     moved = np.abs(resistance - now.resistance_log).max(axis=(1, 2))
     change = np.maximum(change, moved / RESISTANCE_TOLERANCE)
-    c_outside = _capacity_outside(problem, now.field.outside_in, now.field.outside_out, now.outside_pressure)
-    field = _balance(problem, film, ua, c_outside)
+    field = _balance(problem, film, ua, capacity)
     walls = faces(resistances, field.inside_mean, field.heat / _cell_area(problem, like))
     pressure, pressure_change = now.outside_pressure, now.pressure_change
     if renew_pressure:
@@ -341,10 +374,20 @@ def _step(
         pressure_change = np.abs(pressure / now.outside_pressure - 1.0).max(axis=1)
     change = np.maximum(change, pressure_change / PRESSURE_TOLERANCE)
     duty = field.heat.sum(axis=(1, 2))
-    scale = np.maximum(np.abs(duty), 1e-9 * c_outside[:, 0].sum(axis=1))
+    scale = np.maximum(np.abs(duty), 1e-9 * capacity[:, 0].sum(axis=1))
     duty_change = np.abs(duty - now.duty) / scale
     new = Iterate(
-        field, walls, outside_film, inside_film, pressure, inside_pressure, duty, resistance, pressure_change
+        field,
+        walls,
+        outside_film,
+        inside_film,
+        pressure,
+        inside_pressure,
+        duty,
+        resistance,
+        pressure_change,
+        resistances,
+        wetness,
     )
     return new, np.maximum(change, duty_change / DUTY_TOLERANCE), duty_change
 
@@ -359,6 +402,7 @@ def _finish(problem: Problem, done: Iterate, iterations: Array, change: Array) -
         outside=film,
         drop=_outside_drop(problem, done),
         inside=inside,
+        wetness=done.wetness,
         iterations=iterations,
         change=change,
     )

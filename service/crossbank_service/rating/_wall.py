@@ -70,7 +70,8 @@ class Wall(Cases):
     """The wall of every row per outside area: (N, rows, 1).
 
     ``area`` [m2] is that of a row, ``inside_ratio`` and ``bare_ratio`` the outside area over bore and bare tube,
-    ``bond`` the bond resistance on the bare tube [m2 K/W], ``thickness_factor`` d/2 ln(d/d_i) [m].
+    ``bond`` the bond resistance on the bare tube [m2 K/W], ``thickness_factor`` d/2 ln(d/d_i) [m],
+    ``prime_share`` what the fins leave of the outside area.
     """
 
     area: Array
@@ -78,6 +79,7 @@ class Wall(Cases):
     bare_ratio: Array
     bond: Array
     thickness_factor: Array
+    prime_share: Array
 
     @classmethod
     def of(cls, sections: tuple[Section, ...]) -> "Wall":
@@ -98,6 +100,7 @@ class Wall(Cases):
             bare_ratio=rows(lambda s: s.bank.outside_area / s.bank.bare_area),
             bond=rows(lambda s: s.bond),
             thickness_factor=rows(factor),
+            prime_share=rows(lambda s: 1.0 - s.bank.surface.fin_area_share),
         )
 
     def take_rows(self, row: int) -> "Wall":

@@ -49,6 +49,23 @@ _KINDS = (
         "The outer surface is colder than the dew point of the outside stream; the surface was computed dry.",
     ),
     NoticeKind(
+        "wet-surface",
+        "info",
+        "Vapour condenses on the outer surface; latent heat and condensate are counted. The pressure drop is that of "
+        "the dry surface: between close fins a wet one loses 20 to 60 % more.",
+    ),
+    NoticeKind(
+        "fog",
+        "caution",
+        "The outside stream becomes supersaturated: part of its vapour turns to fog.",
+    ),
+    NoticeKind(
+        "frost",
+        "warning",
+        "A surface below the dew point is below freezing: frost will grow. It is not computed; those places are "
+        "rated dry and free.",
+    ),
+    NoticeKind(
         "method-out-of-range",
         "caution",
         "A correlation was used outside the range it is published for; its result is an extrapolation.",
