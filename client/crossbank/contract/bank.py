@@ -7,6 +7,8 @@ from msgspec import Meta
 from crossbank.contract._base import Request, Tagged
 from crossbank.contract._units import (
     DiameterM,
+    ElasticModulusPa,
+    ExpansionPerK,
     FinHeightM,
     FinPitchM,
     FinThicknessM,
@@ -20,6 +22,7 @@ from crossbank.contract._units import (
     PitchM,
     RoughnessM,
     Rows,
+    StressPa,
     TemperatureK,
     TubesPerRow,
     WallThicknessM,
@@ -46,12 +49,48 @@ class Curve(Request, kw_only=True, frozen=True):
     same_length = (("temperature_k", "value"),)
 
 
+class ElasticModulusCurve(Request, kw_only=True, frozen=True):
+    """Young's modulus by temperature: linear between the points, constant beyond the ends."""
+
+    temperature_k: Annotated[list[TemperatureK], Meta(min_length=1, max_length=200)]
+    value: Annotated[list[ElasticModulusPa], Meta(min_length=1, max_length=200)]
+
+    same_length = (("temperature_k", "value"),)
+
+
+class ExpansionCurve(Request, kw_only=True, frozen=True):
+    """Mean linear expansion from 293.15 K to each temperature: linear between the points, constant beyond."""
+
+    temperature_k: Annotated[list[TemperatureK], Meta(min_length=1, max_length=200)]
+    value: Annotated[list[ExpansionPerK], Meta(min_length=1, max_length=200)]
+
+    same_length = (("temperature_k", "value"),)
+
+
+class YieldStressCurve(Request, kw_only=True, frozen=True):
+    """Yield stress by temperature: linear between the points, constant beyond the ends."""
+
+    temperature_k: Annotated[list[TemperatureK], Meta(min_length=1, max_length=200)]
+    value: Annotated[list[StressPa], Meta(min_length=1, max_length=200)]
+
+    same_length = (("temperature_k", "value"),)
+
+
 class Material(Request, kw_only=True, frozen=True):
-    """A metal of the caller's own."""
+    """A metal of the caller's own.
+
+    A rating uses conductivity and density. `elastic_modulus_pa`, `expansion_per_k` (mean from 293.15 K),
+    `yield_stress_pa` and `max_temperature_k` are carried for checks, so that one stored bank serves every call; they
+    do not change a rating.
+    """
 
     name: Word
     conductivity_w_m_k: MetalConductivity | Curve
     density_kg_m3: MetalDensity | None = None
+    elastic_modulus_pa: ElasticModulusPa | ElasticModulusCurve | None = None
+    expansion_per_k: ExpansionPerK | ExpansionCurve | None = None
+    yield_stress_pa: StressPa | YieldStressCurve | None = None
+    max_temperature_k: TemperatureK | None = None
 
 
 class Layout(Request, kw_only=True, frozen=True):
@@ -158,6 +197,8 @@ __all__ = [
     "Bank",
     "Circuit",
     "Curve",
+    "ElasticModulusCurve",
+    "ExpansionCurve",
     "Layout",
     "Material",
     "MaterialName",
@@ -165,4 +206,5 @@ __all__ = [
     "RowGroup",
     "Serrated",
     "Tube",
+    "YieldStressCurve",
 ]

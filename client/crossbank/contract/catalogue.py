@@ -8,6 +8,7 @@ from crossbank.contract._units import (
     KilogramPerM3,
     Number,
     Pascal,
+    PerKelvin,
     WattPerMK,
 )
 
@@ -103,10 +104,47 @@ class FluidRecord(Result, kw_only=True, frozen=True):
     doubt: str | None
 
 
+class GasRecord(Result, kw_only=True, frozen=True):
+    """One gas that a `gas-mixture` may hold; `name` is its member in `mole_fractions`."""
+
+    name: str
+    molar_mass_kg_mol: Number
+    min_temperature_k: Kelvin
+    max_temperature_k: Kelvin
+    stated_error: str
+    doubt: str | None
+
+
+class FuelAsFired(Result, kw_only=True, frozen=True):
+    """Mass fractions of a fuel as fired, as a `combustion-gas` takes them."""
+
+    carbon: Number
+    hydrogen: Number
+    sulfur: Number
+    oxygen: Number
+    nitrogen: Number
+    water: Number
+    ash: Number
+
+
+class FuelRecord(Result, kw_only=True, frozen=True):
+    """A typical fuel: a composition to start from where no analysis is at hand."""
+
+    slug: str
+    description: str
+    typical: bool
+    as_fired: FuelAsFired
+    stoichiometric_air_kg_kg: Number
+    source: str
+    doubt: str
+
+
 class FluidRecords(Result, kw_only=True, frozen=True):
     """Answer of `GET /v1/fluids`."""
 
     fluids: list[FluidRecord]
+    gases: list[GasRecord]
+    fuels: list[FuelRecord]
 
 
 class ConductivityCurve(Result, kw_only=True, frozen=True):
@@ -116,16 +154,40 @@ class ConductivityCurve(Result, kw_only=True, frozen=True):
     value: list[WattPerMK]
 
 
+class ElasticModulusPoints(Result, kw_only=True, frozen=True):
+    """Young's modulus by temperature."""
+
+    temperature_k: list[Kelvin]
+    value: list[Pascal]
+
+
+class ExpansionPoints(Result, kw_only=True, frozen=True):
+    """Mean linear expansion from 293.15 K to each temperature."""
+
+    temperature_k: list[Kelvin]
+    value: list[PerKelvin]
+
+
 class MaterialRecord(Result, kw_only=True, frozen=True):
-    """One material: names, conductivity by temperature, density, where the numbers are from."""
+    """One material: names, properties by temperature, where the numbers are from, what is doubtful.
+
+    `min_temperature_k` and `max_temperature_k` bound the points of the conductivity, they are no limits of use. Curves
+    are linear between their points and constant beyond.
+    """
 
     slug: str
+    description: str
     aliases: list[str]
     conductivity_w_m_k: ConductivityCurve
+    conductivity_uncertainty_fraction: Number
     density_kg_m3: KilogramPerM3 | None
+    elastic_modulus_pa: ElasticModulusPoints | None
+    expansion_per_k: ExpansionPoints | None
+    poisson_ratio: Number
     min_temperature_k: Kelvin | None
     max_temperature_k: Kelvin | None
     source: str
+    mechanical_source: str | None
     doubt: str | None
 
 

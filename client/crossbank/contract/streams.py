@@ -8,6 +8,8 @@ from crossbank.contract._base import Request, Tagged
 from crossbank.contract._units import (
     DifferenceK,
     ElevationM,
+    ExcessAir,
+    FlueOxygen,
     FluidConductivity,
     FluidDensity,
     FluidEnthalpy,
@@ -15,6 +17,7 @@ from crossbank.contract._units import (
     FluidViscosity,
     FoulingM2KW,
     Fraction,
+    GaugePressurePa,
     HumidityRatio,
     MassFlowKgS,
     PressurePa,
@@ -73,6 +76,53 @@ class MoistAir(Tagged, kw_only=True, frozen=True):
     )
 
 
+class MoleFractions(Request, kw_only=True, frozen=True):
+    """Mole fractions of a mixture, water vapour included; they add to 1 within 0.001 and are then normalised."""
+
+    nitrogen: Fraction | None = 0.0
+    oxygen: Fraction | None = 0.0
+    carbon_dioxide: Fraction | None = 0.0
+    water: Fraction | None = 0.0
+    argon: Fraction | None = 0.0
+    sulfur_dioxide: Fraction | None = 0.0
+    carbon_monoxide: Fraction | None = 0.0
+    hydrogen: Fraction | None = 0.0
+    helium: Fraction | None = 0.0
+    methane: Fraction | None = 0.0
+    ethane: Fraction | None = 0.0
+    propane: Fraction | None = 0.0
+    n_butane: Fraction | None = 0.0
+    ammonia: Fraction | None = 0.0
+
+
+class GasMixture(Tagged, kw_only=True, frozen=True):
+    """A mixture of gases at low density, such as flue gas whose composition is known."""
+
+    mole_fractions: MoleFractions
+
+
+class CombustionGas(Tagged, kw_only=True, frozen=True):
+    """Flue gas of complete combustion, from the fuel and how much air it burnt with.
+
+    `carbon` to `ash`: mass fractions of the fuel as fired; they add to 1 within 0.001 and are then normalised. The
+    air by one of `excess_air` (above the stoichiometric, as a fraction of it) and `dry_oxygen_mole_fraction` (oxygen in
+    the dried flue gas). `air_humidity_ratio`: of the combustion air. `/v1/fluids` lists typical fuels.
+    """
+
+    carbon: Fraction | None = 0.0
+    hydrogen: Fraction | None = 0.0
+    sulfur: Fraction | None = 0.0
+    oxygen: Fraction | None = 0.0
+    nitrogen: Fraction | None = 0.0
+    water: Fraction | None = 0.0
+    ash: Fraction | None = 0.0
+    excess_air: ExcessAir | None = None
+    dry_oxygen_mole_fraction: FlueOxygen | None = None
+    air_humidity_ratio: HumidityRatio | None = 0.0
+
+    exactly_one = (("excess_air", "dry_oxygen_mole_fraction"),)
+
+
 class Table(Tagged, kw_only=True, frozen=True):
     """A fluid by the caller's own numbers over temperature; one point means constant properties.
 
@@ -101,13 +151,19 @@ class Table(Tagged, kw_only=True, frozen=True):
     )
 
 
-Fluid = FluidShorthand | Pure | Solution | MoistAir | Table
+Fluid = FluidShorthand | Pure | Solution | MoistAir | GasMixture | CombustionGas | Table
 
 # --- flows ------------------------------------------------------------------------------------------------
 
 
 class Mass(Tagged, kw_only=True, frozen=True):
     """Mass flow, moisture included."""
+
+    kg_s: MassFlowKgS
+
+
+class DryMass(Tagged, kw_only=True, frozen=True):
+    """Mass flow of the dry gas, its vapour left out; for moist air and gas mixtures."""
 
     kg_s: MassFlowKgS
 
@@ -119,12 +175,12 @@ class ActualVolume(Tagged, kw_only=True, frozen=True):
 
 
 class ReferenceVolume(Tagged, kw_only=True, frozen=True):
-    """Volume flow at a reference state (normal or standard volume)."""
+    """Volume flow at a reference state (normal or standard volume); `dry`: of the gas without its vapour."""
 
     m3_s: VolumeFlowM3S
     reference_temperature_k: TemperatureK
     reference_pressure_pa: PressurePa
-    basis: Literal["wet"] | None = "wet"
+    basis: Literal["wet", "dry"] | None = "wet"
 
 
 class ApproachVelocity(Tagged, kw_only=True, frozen=True):
@@ -133,19 +189,23 @@ class ApproachVelocity(Tagged, kw_only=True, frozen=True):
     m_s: VelocityMS
 
 
-Flow = Mass | ActualVolume | ReferenceVolume | ApproachVelocity
+Flow = Mass | DryMass | ActualVolume | ReferenceVolume | ApproachVelocity
 
 # --- streams ----------------------------------------------------------------------------------------------
 
 
 class Outside(Request, kw_only=True, frozen=True):
-    """The stream across the tubes; its pressure directly or by the elevation of the site, exactly one."""
+    """The stream across the tubes; its pressure directly or by the elevation of the site, exactly one.
+
+    `inlet_gauge_pressure_pa` goes with `elevation_m`: above the atmosphere there, negative for a draught.
+    """
 
     fluid: Fluid
     flow: Flow
     inlet_temperature_k: TemperatureK
     inlet_pressure_pa: PressurePa | None = None
     elevation_m: ElevationM | None = None
+    inlet_gauge_pressure_pa: GaugePressurePa | None = None
     fouling_m2_k_w: FoulingM2KW | None = 0.0
 
     exactly_one = (("inlet_pressure_pa", "elevation_m"),)

@@ -5,6 +5,10 @@ from functools import cache
 
 from crossbank_service.properties._fluids import FLUIDS, FluidName
 from crossbank_service.properties._limits import pure_limits
+from crossbank_service.properties.gas_mixture import COUNTED_MOLE_FRACTION
+from crossbank_service.properties.gas_mixture import TEMPERATURE_LIMITS_K as GAS_LIMITS_K
+from crossbank_service.properties.moist_air import TEMPERATURE_LIMITS_K as MOIST_AIR_LIMITS_K
+from crossbank_service.properties.real_gas import HIGHEST_DEVIATION, NOTABLE_DEVIATION
 from crossbank_service.properties.solution import SOLUTIONS, SolutionName, solution_limits
 
 _REFERENCE = "reference equation of state and transport equations of the fluid as collected in CoolProp"
@@ -114,6 +118,61 @@ def _solution(entry: SolutionName) -> FluidRecord:
         source=_SOLUTION_SOURCE,
         stated_error=_SOLUTION_ERROR,
         doubt="The mass fraction is meant, not the volume fraction; inhibitors shift the properties.",
+    )
+
+
+_MIXTURE_SOURCE = (
+    "own fits to the low-density values of the reference equations (CoolProp; steam: IAPWS), ideal gas; Wilke 1950 for"
+    " viscosity, Mason and Saxena 1958 for conductivity"
+)
+_MIXTURE_ERROR = (
+    "0.1 % in heat capacity, 1-2 % in viscosity, 3-4 % in conductivity (5 % when rich in steam); density as an ideal gas:"
+    " within 0.3 % below 3 bar above 320 K"
+)
+
+
+def _family(slug: str, limits: tuple[float, float], note: str, doubt: str | None) -> FluidRecord:
+    return FluidRecord(
+        slug=slug,
+        kind=slug,
+        phases=("gas",),
+        condensing=False,
+        lowest_temperature_k=limits[0],
+        highest_temperature_k=limits[1],
+        highest_pressure_pa=None,
+        critical_temperature_k=None,
+        critical_pressure_pa=None,
+        highest_mass_fraction=None,
+        limits_note=note,
+        source=_MIXTURE_SOURCE,
+        stated_error=_MIXTURE_ERROR,
+        doubt=doubt,
+    )
+
+
+_DENSE = (
+    f"Up to the pressure where the density departs from the ideal gas by {HIGHEST_DEVIATION:.0%};"
+    f" from {NOTABLE_DEVIATION:.0%} on the answer says so."
+)
+
+
+@cache
+def mixture_records() -> tuple[FluidRecord, ...]:
+    """The families of gas mixtures: fluids by composition, not by name; the slug is the tag of the fluid object."""
+    return (
+        _family("moist-air", MOIST_AIR_LIMITS_K, "A gas; the vapour is water's.", None),
+        _family(
+            "gas-mixture",
+            GAS_LIMITS_K,
+            f"A gas. Every gas of {COUNTED_MOLE_FRACTION:.0%} or more narrows the temperatures to its own range. {_DENSE}",
+            "Nothing reacts or dissociates; of condensing vapours only water's is computed on the outside.",
+        ),
+        _family(
+            "combustion-gas",
+            GAS_LIMITS_K,
+            f"A gas. {_DENSE}",
+            "Complete combustion: no carbon monoxide, soot or nitrogen oxides; all sulfur burns to the dioxide.",
+        ),
     )
 
 

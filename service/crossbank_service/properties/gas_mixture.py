@@ -18,6 +18,9 @@ GASES: tuple[str, ...] = tuple(SPECIES)
 TEMPERATURE_LIMITS_K = (200.0, 1800.0)
 """Where the fits of the common gases hold."""
 
+COUNTED_MOLE_FRACTION = 0.01
+"""From this content up a gas's own fitted range narrows the limits of a mixture."""
+
 
 @dataclass(frozen=True, slots=True)
 class GasMixture:
@@ -64,6 +67,17 @@ class GasMixture:
         """Molar mass of shape (N,)."""
         cases = np.zeros(len(self.mole_fractions))
         return ideal_mixture.molar_mass(self._portions(cases))
+
+    @property
+    def temperature_limits_k(self) -> tuple[Array, Array]:
+        """Lowest and highest temperature of each mixture [K], shape (N,): where the fits of all its gases hold."""
+        low = np.full(len(self.mole_fractions), TEMPERATURE_LIMITS_K[0])
+        high = np.full(len(self.mole_fractions), TEMPERATURE_LIMITS_K[1])
+        for i, species in enumerate(SPECIES.values()):
+            counts = self.mole_fractions[:, i] >= COUNTED_MOLE_FRACTION
+            low = np.where(counts, np.maximum(low, species.low_k), low)
+            high = np.where(counts, np.minimum(high, species.high_k), high)
+        return low, high
 
     def at(self, temperature_k: Array, pressure_pa: Array) -> State:
         """Properties at temperatures of shape (N, ...); ``pressure_pa`` broadcasts."""

@@ -30,6 +30,8 @@ class Material:
         Half width of what similar tubes and sheets show.
     source : str
         Where the conductivity is from.
+    mechanical_source : str or None
+        Where modulus and expansion are from.
     doubt : str or None
         What to know before relying on it.
     """
@@ -45,6 +47,7 @@ class Material:
     highest_temperature_k: float
     conductivity_uncertainty_fraction: float
     source: str
+    mechanical_source: str | None
     doubt: str | None
 
 
@@ -60,6 +63,12 @@ _CUPRONICKEL = ((124, 121, 117, 112), (17.0, 17.3, 17.5))
 _BRASS = ((110, 107, 103), (19.5, 20.0))
 _TITANIUM = ((107, 103, 97, 88), (8.6, 8.9, 9.1))
 _ALUMINIUM = ((69, 66, 60), (23.6, 24.4))
+
+
+_MECHANICAL = (
+    "common values of the metal's group as in ASME BPVC Section II Part D, tables TM and TE, from memory: modulus within "
+    "3 %, expansion within 5 %"
+)
 
 
 def _metal(
@@ -93,6 +102,7 @@ def _metal(
         highest_temperature_k=curve[0][-1],
         conductivity_uncertainty_fraction=uncertainty,
         source=source,
+        mechanical_source=None if mechanics is None else _MECHANICAL,
         doubt=doubt,
     )
 
