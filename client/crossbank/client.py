@@ -17,6 +17,7 @@ from crossbank.contract import (
     Detail,
     Evaluation,
     FluidRecord,
+    FuelRecord,
     HeldSurface,
     MaterialRecord,
     MethodChoice,
@@ -190,6 +191,10 @@ class Client:
         """List the fluids the service knows."""
         return self.send(calls.fluids()).value.fluids
 
+    def fuels(self) -> list[FuelRecord]:
+        """List typical fuels for `combustion-gas`."""
+        return self.send(calls.fluids()).value.fuels
+
     def materials(self) -> list[MaterialRecord]:
         """List the materials the service knows."""
         return self.send(calls.materials()).value.materials
@@ -309,6 +314,10 @@ class AsyncClient:
     async def fluids(self) -> list[FluidRecord]:
         """List the fluids the service knows."""
         return (await self.send(calls.fluids())).value.fluids
+
+    async def fuels(self) -> list[FuelRecord]:
+        """List typical fuels for `combustion-gas`."""
+        return (await self.send(calls.fluids())).value.fuels
 
     async def materials(self) -> list[MaterialRecord]:
         """List the materials the service knows."""

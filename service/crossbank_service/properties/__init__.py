@@ -24,6 +24,8 @@ Tables are built once, when a fluid is first used; nothing is asked of an equati
 
 from crossbank_service.properties._arrays import Curve
 from crossbank_service.properties._fluids import FLUIDS
+from crossbank_service.properties._gas_data import R as GAS_CONSTANT
+from crossbank_service.properties._gas_data import Species, gas_records
 from crossbank_service.properties._limits import PureLimits, pure_limits
 from crossbank_service.properties.catalogue import FluidRecord, fluid_records, mixture_records
 from crossbank_service.properties.combustion import (
@@ -33,7 +35,7 @@ from crossbank_service.properties.combustion import (
     water_dew_point,
 )
 from crossbank_service.properties.fuels import FUELS, Fuel, fuel_records
-from crossbank_service.properties.gas_mixture import GASES, GasMixture
+from crossbank_service.properties.gas_mixture import GASES, MOLAR_MASSES_KG_MOL, GasMixture
 from crossbank_service.properties.local import LocalMedium
 from crossbank_service.properties.materials import (
     MATERIALS,
@@ -73,7 +75,9 @@ __all__ = [
     "FLUIDS",
     "FUELS",
     "GASES",
+    "GAS_CONSTANT",
     "MATERIALS",
+    "MOLAR_MASSES_KG_MOL",
     "SOLUTIONS",
     "Array",
     "CombustionProducts",
@@ -92,6 +96,7 @@ __all__ = [
     "Saturation",
     "Solution",
     "SolutionLimits",
+    "Species",
     "State",
     "Table",
     "TablePoints",
@@ -103,6 +108,7 @@ __all__ = [
     "fluid_records",
     "freezing_temperature",
     "fuel_records",
+    "gas_records",
     "humidity_ratio_from_dew_point",
     "humidity_ratio_from_relative_humidity",
     "humidity_ratio_from_vapour_pressure",

@@ -309,3 +309,8 @@ _SPECIES = (
 
 SPECIES: MappingProxyType[str, Species] = MappingProxyType({s.slug: s for s in _SPECIES})
 """The gases a mixture may hold, in the order of a composition array's columns."""
+
+
+def gas_records() -> tuple[Species, ...]:
+    """All gases a mixture may hold."""
+    return _SPECIES

@@ -126,8 +126,8 @@ _MIXTURE_SOURCE = (
     " viscosity, Mason and Saxena 1958 for conductivity"
 )
 _MIXTURE_ERROR = (
-    "0.1 % in heat capacity, 1-2 % in viscosity, 3-4 % in conductivity (5 % when rich in steam); density as an ideal gas:"
-    " within 0.3 % below 3 bar above 320 K"
+    "0.1 % in heat capacity, 1-2 % in viscosity, 3-4 % in conductivity (5 % when rich in steam); density as an"
+    " ideal gas: within 0.3 % below 3 bar above 320 K"
 )
 
 
@@ -164,7 +164,8 @@ def mixture_records() -> tuple[FluidRecord, ...]:
         _family(
             "gas-mixture",
             GAS_LIMITS_K,
-            f"A gas. Every gas of {COUNTED_MOLE_FRACTION:.0%} or more narrows the temperatures to its own range. {_DENSE}",
+            f"A gas. Every gas of {COUNTED_MOLE_FRACTION:.0%} or more narrows the temperatures to its own range."
+            f" {_DENSE}",
             "Nothing reacts or dissociates; of condensing vapours only water's is computed on the outside.",
         ),
         _family(

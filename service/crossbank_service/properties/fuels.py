@@ -36,7 +36,7 @@ def _wet(dry: Mapping[str, float], water: float) -> dict[str, float]:
 
 def _gas(moles: Mapping[str, float]) -> dict[str, float]:
     """Element mass fractions of a fuel gas from its mole fractions."""
-    total = {name: 0.0 for name in MEMBERS}
+    total = dict.fromkeys(MEMBERS, 0.0)
     for gas, y in moles.items():
         for name, mass in _ELEMENTS[gas].items():
             total[name] += y * mass
@@ -163,7 +163,8 @@ _FUELS = (
         "bark",
         "softwood bark from wet debarking, 58 % water",
         _wet(_BARK, 0.58),
-        source="typical dry values of coniferous bark as in EN ISO 17225-1, annex B, from memory, with 58 % water as fired",
+        source="typical dry values of coniferous bark as in EN ISO 17225-1, annex B, from memory, with 58 % water as "
+        "fired",
         doubt="Water runs from 0.45 to 0.65 and ash from 0.01 to 0.1 with sand: measure them.",
     ),
 )

@@ -2,6 +2,7 @@
 
 from collections.abc import Mapping
 from dataclasses import dataclass
+from types import MappingProxyType
 from typing import ClassVar, Self
 
 import numpy as np
@@ -14,6 +15,10 @@ from crossbank_service.properties.medium import Array, State
 
 GASES: tuple[str, ...] = tuple(SPECIES)
 """Names of the gases a mixture may hold, in the order of the columns of ``mole_fractions``."""
+
+MOLAR_MASSES_KG_MOL: MappingProxyType[str, float] = MappingProxyType(
+    {name: gas.molar_mass_kg_mol for name, gas in SPECIES.items()}
+)
 
 TEMPERATURE_LIMITS_K = (200.0, 1800.0)
 """Where the fits of the common gases hold."""
@@ -75,6 +80,8 @@ class GasMixture:
         high = np.full(len(self.mole_fractions), TEMPERATURE_LIMITS_K[1])
         for i, species in enumerate(SPECIES.values()):
             counts = self.mole_fractions[:, i] >= COUNTED_MOLE_FRACTION
+            if not counts.any():
+                continue
             low = np.where(counts, np.maximum(low, species.low_k), low)
             high = np.where(counts, np.minimum(high, species.high_k), high)
         return low, high

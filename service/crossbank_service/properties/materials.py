@@ -66,8 +66,8 @@ _ALUMINIUM = ((69, 66, 60), (23.6, 24.4))
 
 
 _MECHANICAL = (
-    "common values of the metal's group as in ASME BPVC Section II Part D, tables TM and TE, from memory: modulus within "
-    "3 %, expansion within 5 %"
+    "common values of the metal's group as in ASME BPVC Section II Part D, tables TM and TE, from memory: modulus "
+    "within 3 %, expansion within 5 %"
 )
 
 

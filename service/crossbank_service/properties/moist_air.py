@@ -14,6 +14,9 @@ from crossbank_service.properties.medium import Array, State
 MASS_RATIO = 0.621945
 """Molar mass of water over that of dry air [-], as in the ASHRAE psychrometric tables."""
 
+DRY_MOLAR_MASS_KG_MOL = DRY_AIR.molar_mass_kg_mol
+"""Molar mass of dry air."""
+
 TEMPERATURE_LIMITS_K = (150.0, 1800.0)
 
 

@@ -59,6 +59,8 @@ def compressibility(mole_fractions: Array, temperature_k: Array, pressure_pa: Ar
     for i, name in enumerate(SPECIES):
         t, p, omega = _CRITICAL[name]
         y = mole_fractions[:, i]
+        if not y.any():  # it would add exact zeros
+            continue
         critical_t, critical_p, acentric = critical_t + y * t, critical_p + y * p, acentric + y * omega
     reduced = np.maximum(temperature_k / critical_t, 0.1)
     b0 = 0.083 - 0.422 * reduced**-1.6

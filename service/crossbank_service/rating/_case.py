@@ -4,6 +4,7 @@ from dataclasses import dataclass, field
 from typing import Literal
 
 from crossbank.contract import Assumed, RateRequest
+from crossbank_service.properties.moist_air import MASS_RATIO
 from crossbank_service.rating._circuit import Circuit
 
 Curve = tuple[tuple[float, ...], tuple[float, ...]]
@@ -23,7 +24,8 @@ class FluidInput:
     family : tuple
         Such as ``("pure", "water", "liquid")``; fluids of one family differ in ``numbers`` only.
     numbers : tuple
-        Parameters of this case: mass fraction, humidity ratio, or the lists of a table.
+        Parameters of this case: mass fraction, humidity ratio, mole fractions of all ``GASES``, or the lists of
+        a table.
     """
 
     family: tuple[str, ...]
@@ -96,6 +98,9 @@ class Case:
         The rows by their surfaces, first row first.
     outside_flow, outside_temperature, outside_pressure, outside_fouling : float
         [kg/s], [K], [Pa], [m2 K/W]
+    humidity_ratio, molar_ratio, water_mole_fraction, sulfur_dioxide_mole_fraction : float or None
+        Of an outside gas of known composition: kg of water a kg of dry gas (None for steam), molar mass of water
+        over that of the dry gas, mole fractions; None for every other fluid.
     methods : dict
         Slug by role, inside.
     idle : str or None
@@ -117,6 +122,9 @@ class Case:
     methods: dict[str, str]
     idle: str | None = None
     assumed: tuple[Assumed, ...] = field(default_factory=tuple)
+    molar_ratio: float = MASS_RATIO
+    water_mole_fraction: float | None = None
+    sulfur_dioxide_mole_fraction: float | None = None
 
     @property
     def bank(self) -> dict[str, float]:

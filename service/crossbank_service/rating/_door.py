@@ -5,18 +5,13 @@ from dataclasses import replace
 import numpy as np
 
 from crossbank.contract import (
-    ActualVolume,
-    ApproachVelocity,
     Assumed,
     Bank,
     Condensing,
     HeldSurface,
-    Mass,
-    Outside,
     Plate,
     Pure,
     RateRequest,
-    ReferenceVolume,
     SinglePhase,
     broken_rules,
     given,
@@ -24,13 +19,15 @@ from crossbank.contract import (
 from crossbank.contract.names import fluid_slug
 from crossbank_service import properties
 from crossbank_service.errors import CoreError
-from crossbank_service.properties import psychrometrics
+from crossbank_service.properties.moist_air import MASS_RATIO
 from crossbank_service.rating import _fluid_door
 from crossbank_service.rating._case import Case, FluidInput, InsideInput, SectionInput
 from crossbank_service.rating._circuit import Circuit
+from crossbank_service.rating._composition import composition_of
 from crossbank_service.rating._engine import bank_of
 from crossbank_service.rating._faults import Faults
-from crossbank_service.rating._fluids import medium_of
+from crossbank_service.rating._flow_door import mass_flow, outside_pressure
+from crossbank_service.rating._gas_door import gas_assumptions
 from crossbank_service.rating._methods import choose_inside, choose_outside
 from crossbank_service.rating._surface_door import bond, sections_of
 
@@ -61,7 +58,7 @@ def enter(request: RateRequest) -> Case | CoreError:
         )
     if detail.resolution == "bank" and property_state == "local":
         property_state = "mean"
-    pressure = _outside_pressure(request.outside)
+    pressure = outside_pressure(request.outside, faults)
     fluid = _fluid_door.check_fluid(
         request.outside.fluid,
         request.outside.inlet_temperature_k,
@@ -85,7 +82,9 @@ def enter(request: RateRequest) -> Case | CoreError:
             "bank",
             one_of=("row",),
         )
-    flow = _mass_flow(request.outside, fluid, pressure, sections[0], faults)
+    face_area = float(bank_of(sections[:1]).face_area[0])
+    flow = mass_flow(request.outside, fluid, pressure, face_area, faults)
+    found = composition_of(fluid)
     methods = choose_inside(request, inside.kind, faults)
     sections = choose_outside(request, sections, gas=fluid.gas, faults=faults)
     if faults:
@@ -98,13 +97,16 @@ def enter(request: RateRequest) -> Case | CoreError:
         outside_temperature=request.outside.inlet_temperature_k,
         outside_pressure=pressure,
         outside_fouling=given(request.outside.fouling_m2_k_w),
-        humidity_ratio=float(fluid.numbers[0]) if fluid.family == ("moist-air",) else None,  # type: ignore[arg-type]
+        humidity_ratio=found.humidity_ratio if found else None,
+        molar_ratio=found.molar_ratio if found else MASS_RATIO,
+        water_mole_fraction=found.water if found else None,
+        sulfur_dioxide_mole_fraction=found.sulfur_dioxide if found else None,
         inside=inside,
         circuit=circuit,
         segments=_segments(request, inside, circuit),
         property_state=property_state,
         methods=methods,
-        assumed=_assumed(request, inside, pressure, sections),
+        assumed=_assumed(request, inside, pressure, sections) + gas_assumptions(request, found),
     )
     return replace(case, idle=_idle(case))
 
@@ -122,34 +124,6 @@ def _circuit(bank: Bank, faults: Faults) -> Circuit | None:
         )
         return None
     return Circuit((rows // passes,) * passes, against=circuit.direction == "against")
-
-
-def _outside_pressure(outside: Outside) -> float:
-    if outside.inlet_pressure_pa is not None:
-        return outside.inlet_pressure_pa
-    return float(psychrometrics.standard_pressure(given(outside.elevation_m)))
-
-
-def _mass_flow(
-    outside: Outside, fluid: FluidInput, pressure: float, section: SectionInput, faults: Faults
-) -> float:
-    flow = outside.flow
-    if isinstance(flow, Mass):
-        return flow.kg_s
-    temperature = outside.inlet_temperature_k
-    if isinstance(flow, ReferenceVolume):
-        temperature, pressure = flow.reference_temperature_k, flow.reference_pressure_pa
-        checked = _fluid_door.reference_state(fluid, temperature, pressure)
-        if checked is not None:
-            faults.refuse("/outside/flow/reference_temperature_k", checked, temperature, "K")
-            return 0.0
-    state = medium_of([fluid]).at(np.array([temperature]), np.array([pressure]))
-    density = float(state.density_kg_m3[0])
-    match flow:
-        case ActualVolume() | ReferenceVolume():
-            return flow.m3_s * density
-        case ApproachVelocity():
-            return flow.m_s * float(bank_of([section]).face_area[0]) * density
 
 
 def _inside(request: RateRequest, faults: Faults) -> InsideInput | None:
@@ -299,7 +273,9 @@ def _assumed(
                 pointer="/outside/inlet_pressure_pa",
                 value=pressure,
                 unit="Pa",
-                why="standard atmosphere at the elevation given",
+                why="standard atmosphere at the elevation given"
+                if outside.inlet_gauge_pressure_pa is None
+                else "standard atmosphere at the elevation given, and the gauge pressure on top",
             )
         )
     if outside.fouling_m2_k_w == 0.0:

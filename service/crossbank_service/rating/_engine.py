@@ -10,7 +10,6 @@ import numpy as np
 from crossbank_service import properties
 from crossbank_service.banks import FinSet, TubeBank
 from crossbank_service.properties import Medium, psychrometrics
-from crossbank_service.properties.moist_air import MASS_RATIO
 from crossbank_service.rating import _lumped, _performance, _solver
 from crossbank_service.rating._arrays import Array
 from crossbank_service.rating._case import Case, FluidInput, InsideInput, SectionInput, narrow
@@ -103,14 +102,16 @@ def _moisture(cases: Sequence[Case]) -> Moisture | None:
     wet = [w or 0.0 for w in (case.humidity_ratio for case in cases)]
     humidity, pressure = np.array(wet), _column(cases, "outside_pressure")
     coldest = np.array([min(case.inside.temperature, case.outside_temperature) for case in cases])
-    possible = (humidity > 0.0) & (coldest < psychrometrics.dew_point(humidity, pressure))
+    ratio = _column(cases, "molar_ratio")
+    vapour = pressure * humidity / (humidity + ratio)
+    possible = (humidity > 0.0) & (coldest < psychrometrics.saturation_temperature(vapour))
     if not possible.any():
         return None
     flow = _column(cases, "outside_flow")
     return Moisture(
         dry_flow=flow / (1.0 + humidity),
         humidity=humidity,
-        molar_ratio=np.full_like(flow, MASS_RATIO),
+        molar_ratio=ratio,
     )
 
 

@@ -2,11 +2,12 @@
 
 import numpy as np
 
-from crossbank.contract import Fluid, MoistAir, Pure, Solution, Table, given
+from crossbank.contract import CombustionGas, Fluid, GasMixture, MoistAir, Pure, Solution, Table, given
 from crossbank.contract.names import fluid_slug
 from crossbank_service import properties
 from crossbank_service.properties import psychrometrics
 from crossbank_service.properties.moist_air import TEMPERATURE_LIMITS_K as MOIST_AIR_LIMITS_K
+from crossbank_service.rating import _gas_door
 from crossbank_service.rating._case import FluidInput
 from crossbank_service.rating._faults import Faults
 
@@ -56,6 +57,10 @@ def check_fluid(
             return _solution(fluid, temperature, pointer, temperature_pointer, faults)
         case MoistAir():
             return _moist_air(fluid, temperature, pressure, pointer, temperature_pointer, faults)
+        case GasMixture():
+            return _gas_door.gas_mixture(fluid, temperature, pressure, stream, faults)
+        case CombustionGas():
+            return _gas_door.combustion_gas(fluid, temperature, pressure, stream, faults)
         case Table():
             return _table(fluid, temperature, temperature_pointer, faults)
 

@@ -22,6 +22,8 @@ def medium_of(fluids: Sequence[FluidInput]) -> Medium:
     match family[0]:
         case "moist-air":
             return properties.MoistAir(np.array([n[0] for n in numbers]))
+        case "gas-mixture":
+            return properties.GasMixture(np.array(numbers, dtype=np.float64))
         case "pure":
             return properties.PureSinglePhase(family[1], "gas" if fluids[0].gas else "liquid")
         case "solution":
@@ -45,6 +47,8 @@ def _limits(medium: Medium, pressure: Array) -> tuple[Array, Array]:
     match medium:
         case properties.MoistAir():
             return everywhere * MOIST_AIR_LIMITS_K[0], everywhere * MOIST_AIR_LIMITS_K[1]
+        case properties.GasMixture():
+            return medium.temperature_limits_k
         case properties.Solution():
             freezing = properties.freezing_temperature(medium.name, medium.mass_fraction)
             return freezing, everywhere * properties.solution_limits(medium.name).highest_temperature_k

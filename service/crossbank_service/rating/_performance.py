@@ -7,6 +7,7 @@ import numpy as np
 from crossbank_service.properties import psychrometrics
 from crossbank_service.rating import _single_phase
 from crossbank_service.rating._arrays import Array, Cases
+from crossbank_service.rating._buoyancy import richardson
 from crossbank_service.rating._condensing import CondensingFilm, CondensingStream
 from crossbank_service.rating._lumped import Lump
 from crossbank_service.rating._outside import mass_flux, temperature_of
@@ -37,6 +38,7 @@ class OutsideFound(Cases):
     bulk_max: Array
     face_min: Array
     face_max: Array
+    richardson: Array
     choked: Array
 
 
@@ -186,6 +188,11 @@ def of_solution(problem: Problem, found: Solution) -> Performance:
         ),
         faces=found.walls,
         resistances=found.resistances,
+        buoyancy=richardson(
+            problem,
+            0.5 * (field.outside_in + field.outside_out).mean(axis=2),
+            found.walls.outside_film.mean(axis=2),
+        ),
     )
     inside = _inside_of_solution(problem, found)
     given_off = heat.sum(axis=(1, 2))
@@ -254,6 +261,7 @@ def of_lump(problem: Problem, found: Lump) -> Performance:
         bulk=np.stack([ends.min(axis=0), ends.max(axis=0)]),
         faces=Faces(*(getattr(found.walls, f.name)[:, None] for f in fields(Faces))),
         resistances=Resistances(*(getattr(found.resistances, f.name)[:, None] for f in fields(Resistances))),
+        buoyancy=richardson(problem, ends.mean(axis=0)[:, None], found.walls.outside_film[:, None]),
     )
     inside = _inside_of_lump(problem, found)
     heat = found.duty[:, None]
@@ -331,6 +339,7 @@ def _outside(
     bulk: Array,
     faces: Faces,
     resistances: Resistances,
+    buoyancy: Array,
 ) -> OutsideFound:
     stream = problem.outside
     inlet_density = stream.medium.at(stream.inlet_temperature, stream.inlet_pressure).density_kg_m3
@@ -351,6 +360,7 @@ def _outside(
         surface_efficiency=resistances.surface_efficiency.reshape(len(outlet), -1).mean(axis=1),
         face_min=np.minimum(_low(faces.outside_film), _low(faces.fin_root)),
         face_max=np.maximum(_high(faces.outside_film), _high(faces.fin_root)),
+        richardson=buoyancy,
         choked=(friction + momentum > 0.5 * stream.inlet_pressure).astype(np.float64),
     )
 

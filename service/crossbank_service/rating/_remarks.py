@@ -4,22 +4,16 @@ import numpy as np
 
 from crossbank.contract import Notice
 from crossbank_service import properties
-from crossbank_service.properties import psychrometrics
-from crossbank_service.properties.moist_air import TEMPERATURE_LIMITS_K as MOIST_AIR_LIMITS_K
 from crossbank_service.rating._case import Case, FluidInput
+from crossbank_service.rating._composition import gas_limits
+from crossbank_service.rating._gas_remarks import gas_remarks, inside_gas_remarks
 from crossbank_service.rating._performance import InsideFound, OutsideFound, Performance, WetFound
 from crossbank_service.rating._ranges import MethodRange
 from crossbank_service.rating._report import one
 from crossbank_service.rating._surface_door import half_gap
-from crossbank_service.rating.notices import NOTICES
+from crossbank_service.rating.notices import notice
 
 VAPOUR_PRESSURE_SHARE = 0.1
-
-
-def notice(code: str, text: str | None = None, pointer: str | None = None) -> Notice:
-    """A notice of the catalogue, with its own words where the case has more to say."""
-    kind = NOTICES[code]
-    return Notice(code=code, severity=kind.severity, text=text or kind.meaning, pointer=pointer)
 
 
 def remarks(case: Case, found: Performance, used: tuple[MethodRange, ...]) -> list[Notice]:
@@ -61,24 +55,14 @@ def _fluid_remarks(case: Case, found: Performance) -> list[Notice]:
         return []
     out: list[Notice] = []
     o, i = found.outside, found.inside
-    if case.humidity_ratio is not None:
-        dew = float(psychrometrics.dew_point(case.humidity_ratio, case.outside_pressure))
-        coldest = one(o.face_min)
-        if found.wet is None and coldest < dew:
-            out.append(
-                notice(
-                    "surface-below-dew-point",
-                    f"The outer surface reaches {coldest:.2f} K, below the dew point {dew:.2f} K of the outside "
-                    "stream; the surface was computed dry, its latent heat and condensate are left out.",
-                    "/outside/fluid",
-                )
-            )
+    out += gas_remarks(case, found)
     if found.wet is not None:
         out += _wet_remarks(found.wet)
     out += _phase_remarks(case.outside_fluid, o, one(o.outlet_pressure), "outside", "/outside/fluid")
     fluid = case.inside.fluid
     if i is not None and fluid is not None and case.inside.kind == "single-phase":
         out += _phase_remarks(fluid, i, one(i.outlet_pressure), "inside", "/inside/fluid")
+        out += inside_gas_remarks(fluid, i)
     if (
         i is not None
         and case.inside.kind == "condensing"
@@ -139,7 +123,7 @@ def _phase_remarks(
             if len(t) > 1 and not t[0] <= lowest <= highest <= t[-1]:
                 out.append(_beyond(lowest, highest, t[0], t[-1], pointer))
         case _:
-            low, high = MOIST_AIR_LIMITS_K
+            low, high = gas_limits(fluid)
             if not low <= lowest <= highest <= high:
                 out.append(_beyond(lowest, highest, low, high, pointer))
     return out

@@ -135,7 +135,7 @@ def _outside(case: Case, found: Performance) -> OutsideResult:
         outlet_humidity_ratio=w,
         outlet_relative_humidity=None
         if w is None
-        else float(psychrometrics.relative_humidity(outlet, w, pressure)),
+        else pressure * w / (w + case.molar_ratio) / float(psychrometrics.saturation_pressure(outlet)),
         moisture_removed_kg_s=None if w is None else removed,
     )
 

@@ -2,6 +2,8 @@
 
 from dataclasses import dataclass
 
+from crossbank.contract import Notice
+
 
 @dataclass(frozen=True)
 class NoticeKind:
@@ -66,6 +68,26 @@ _KINDS = (
         "rated dry and free.",
     ),
     NoticeKind(
+        "surface-below-acid-dew-point",
+        "caution",
+        "The tube metal is colder than the sulfuric acid dew point of the flue gas: it will corrode.",
+    ),
+    NoticeKind(
+        "gas-radiation-ignored",
+        "caution",
+        "A hot gas with water vapour or carbon dioxide radiates to the tubes; that heat is left out.",
+    ),
+    NoticeKind(
+        "buoyancy",
+        "caution",
+        "The outside stream is so slow that its own buoyancy moves it; the correlations are for forced convection.",
+    ),
+    NoticeKind(
+        "gas-not-ideal",
+        "caution",
+        "A gas mixture is notably off the ideal gas it was rated as.",
+    ),
+    NoticeKind(
         "method-out-of-range",
         "caution",
         "A correlation was used outside the range it is published for; its result is an extrapolation.",
@@ -99,3 +121,9 @@ _KINDS = (
 )
 
 NOTICES = {kind.code: kind for kind in _KINDS}
+
+
+def notice(code: str, text: str | None = None, pointer: str | None = None) -> Notice:
+    """A notice of the catalogue, with its own words where the case has more to say."""
+    kind = NOTICES[code]
+    return Notice(code=code, severity=kind.severity, text=text or kind.meaning, pointer=pointer)
