@@ -24,6 +24,7 @@ from crossbank.contract import (
 )
 from crossbank.contract.names import fluid_slug, material_slug
 from crossbank_service import properties
+from crossbank_service.banks import TubeBank
 from crossbank_service.errors import CoreError
 from crossbank_service.properties import psychrometrics
 from crossbank_service.rating import _fluid_door
@@ -35,8 +36,8 @@ from crossbank_service.rating._methods import choose
 
 PASS_LOSS_HEADS = 1.5  # entry 0.5 and exit 1.0 velocity heads, headers between passes alike
 VAPOUR_ENTRY_HEADS = 0.5
-SEGMENTS_ONE_PASS = 16
-SEGMENTS_MORE_PASSES = 8
+SEGMENTS_ONE_PASS = 24
+SEGMENTS_MORE_PASSES = 12
 SEGMENTS_CONDENSING = 8
 
 
@@ -79,6 +80,15 @@ def enter(request: RateRequest) -> Case | CoreError:
     if faults or fluid is None or inside is None or circuit is None:
         return faults.error()
     bank = _numbers(request.bank, density)
+    if _free_area(bank) <= 0.0:
+        faults.refuse(
+            "/bank/layout/side_gap_m",
+            "No free section is left: the side gaps take away more than the gaps between the tubes give.",
+            request.bank.layout.side_gap_m,
+            "m",
+            at_least=_needed_gap(bank),
+        )
+        return faults.error()
     flow = _mass_flow(request.outside, fluid, pressure, bank, faults)
     methods = choose(request, bank["staggered"] > 0.5, fluid.gas, inside.kind, faults)
     if faults or methods is None:
@@ -205,6 +215,15 @@ def _numbers(bank: Bank, density: float) -> dict[str, float]:
         "roughness": given(tube.roughness_m),
         "tube_density": density,
     }
+
+
+def _free_area(bank: dict[str, float]) -> float:
+    return float(TubeBank(**{name: np.array([value]) for name, value in bank.items()}).free_area[0])
+
+
+def _needed_gap(bank: dict[str, float]) -> float:
+    """The side gap at which the free section vanishes [m]."""
+    return bank["side_gap"] - 0.5 * _free_area(bank) / bank["tube_length"]
 
 
 def _outside_pressure(outside: Outside) -> float:

@@ -54,9 +54,10 @@ def perform(cases: Sequence[Case]) -> list[Rated]:
             chunk = members[start : start + size]
             problem = problem_of([cases[i] for i in chunk])
             performance, found = rate_problem(problem, first.property_state)
+            single = performance.each(len(chunk))
             for place, i in enumerate(chunk):
                 out[i] = (
-                    performance.take(slice(place, place + 1)),
+                    single[place],
                     {role: each.of_case(place) for role, each in found.items()},
                 )
     return [each for each in out if each is not None]

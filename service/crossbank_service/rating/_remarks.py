@@ -62,9 +62,10 @@ def _fluid_remarks(case: Case, found: Performance) -> list[Notice]:
     out: list[Notice] = []
     o, i = found.outside, found.inside
     if case.humidity_ratio is not None:
-        dew = float(psychrometrics.dew_point(case.humidity_ratio, case.outside_pressure))
         coldest = one(o.face_min)
-        if coldest < dew:
+        vapour = float(psychrometrics.vapour_pressure(case.humidity_ratio, case.outside_pressure))
+        if float(psychrometrics.saturation_pressure(coldest)) < vapour:
+            dew = float(psychrometrics.dew_point(case.humidity_ratio, case.outside_pressure))
             out.append(
                 notice(
                     "surface-below-dew-point",
