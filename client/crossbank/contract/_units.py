@@ -47,6 +47,10 @@ FluidEnthalpy = Annotated[float, Meta(ge=-1e9, le=1e9, extra_json_schema={"x-uni
 Rows = Annotated[int, Meta(ge=1, le=200, extra_json_schema={"x-unit": "1"})]
 TubesPerRow = Annotated[int, Meta(ge=1, le=2000, extra_json_schema={"x-unit": "1"})]
 Passes = Annotated[int, Meta(ge=1, le=200, extra_json_schema={"x-unit": "1"})]
+Strips = Annotated[int, Meta(ge=0, le=200, extra_json_schema={"x-unit": "1"})]
+YawRad = Annotated[float, Meta(ge=0, le=1.3, extra_json_schema={"x-unit": "rad"})]
+VelocityRatio = Annotated[float, Meta(ge=0.05, le=10, extra_json_schema={"x-unit": "1"})]
+BypassFraction = Annotated[float, Meta(ge=0, le=0.95, extra_json_schema={"x-unit": "1"})]
 Segments = Annotated[int, Meta(ge=1, le=400, extra_json_schema={"x-unit": "1"})]
 
 Word = Annotated[str, Meta(min_length=1, max_length=80)]

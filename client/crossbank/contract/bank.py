@@ -23,10 +23,12 @@ from crossbank.contract._units import (
     RoughnessM,
     Rows,
     StressPa,
+    Strips,
     TemperatureK,
     TubesPerRow,
     WallThicknessM,
     Word,
+    YawRad,
 )
 
 MaterialName = Annotated[
@@ -93,11 +95,30 @@ class Material(Request, kw_only=True, frozen=True):
     max_temperature_k: TemperatureK | None = None
 
 
+class Cavity(Request, kw_only=True, frozen=True):
+    """An empty stretch of duct behind row `after_row`, `depth_m` from tube surface to tube surface."""
+
+    after_row: Rows
+    depth_m: PitchM
+
+
+class Lane(Request, kw_only=True, frozen=True):
+    """An open lane beside the tubes, from inlet to outlet, that widens the duct by `width_m`.
+
+    `strips` counts the sealing strips across it.
+    """
+
+    width_m: PitchM
+    strips: Strips | None = 0
+
+
 class Layout(Request, kw_only=True, frozen=True):
     """Where the tubes stand in the duct.
 
     `tubes_per_row` counts row 1; `tube_length_m` is the length in the duct; `side_gap_m` is the clear
-    distance from the outermost tube of row 1 to the wall (null: half the clear gap between tubes).
+    distance from the outermost tube (fin tip) of row 1 to the wall (null: half the clear gap between them).
+    `cavities` part the rows into bundles in series; `lanes` let part of the stream pass unheated; `yaw_rad` is the
+    angle by which the stream leaves the normal to the tubes.
     """
 
     arrangement: Literal["inline", "staggered"]
@@ -107,6 +128,9 @@ class Layout(Request, kw_only=True, frozen=True):
     tubes_per_row: TubesPerRow
     tube_length_m: LengthM
     side_gap_m: GapM | None = None
+    cavities: Annotated[list[Cavity], Meta(min_length=1, max_length=50)] | None = None
+    lanes: Annotated[list[Lane], Meta(min_length=1, max_length=20)] | None = None
+    yaw_rad: YawRad | None = 0.0
 
 
 class Tube(Request, kw_only=True, frozen=True):
@@ -195,10 +219,12 @@ class Bank(Request, kw_only=True, frozen=True):
 __all__ = [
     "Annular",
     "Bank",
+    "Cavity",
     "Circuit",
     "Curve",
     "ElasticModulusCurve",
     "ExpansionCurve",
+    "Lane",
     "Layout",
     "Material",
     "MaterialName",

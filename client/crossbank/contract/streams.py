@@ -6,6 +6,7 @@ from msgspec import Meta
 
 from crossbank.contract._base import Request, Tagged
 from crossbank.contract._units import (
+    BypassFraction,
     DifferenceK,
     ElevationM,
     ExcessAir,
@@ -23,6 +24,7 @@ from crossbank.contract._units import (
     PressurePa,
     TemperatureK,
     VelocityMS,
+    VelocityRatio,
     VolumeFlowM3S,
 )
 
@@ -194,9 +196,20 @@ Flow = Mass | DryMass | ActualVolume | ReferenceVolume | ApproachVelocity
 # --- streams ----------------------------------------------------------------------------------------------
 
 
+class FaceZone(Request, kw_only=True, frozen=True):
+    """Part of the face with a velocity of its own.
+
+    Area shares sum to 1, and so do the products of share and `velocity_ratio` (over the mean velocity).
+    """
+
+    area_share: Fraction
+    velocity_ratio: VelocityRatio
+
+
 class Outside(Request, kw_only=True, frozen=True):
     """The stream across the tubes; its pressure directly or by the elevation of the site, exactly one.
 
+    `distribution` parts the face into zones of uneven velocity; `bypass_fraction` of the flow passes by the bank.
     `inlet_gauge_pressure_pa` goes with `elevation_m`: above the atmosphere there, negative for a draught.
     """
 
@@ -207,6 +220,8 @@ class Outside(Request, kw_only=True, frozen=True):
     elevation_m: ElevationM | None = None
     inlet_gauge_pressure_pa: GaugePressurePa | None = None
     fouling_m2_k_w: FoulingM2KW | None = 0.0
+    distribution: Annotated[list[FaceZone], Meta(min_length=2, max_length=50)] | None = None
+    bypass_fraction: BypassFraction | None = 0.0
 
     exactly_one = (("inlet_pressure_pa", "elevation_m"),)
 

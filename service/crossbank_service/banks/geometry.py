@@ -157,6 +157,12 @@ class TubeBank:
         return self.width * self.tube_length
 
     @property
+    def diagonal_gap_governs(self) -> Array:
+        """1.0 where the two diagonal gaps of a staggered pitch are narrower than the transverse gap."""
+        narrower = self.surface.diagonal_gap < self.surface.transverse_gap
+        return np.where((self.staggered > 0.5) & narrower & (self.rows > 1.0), 1.0, 0.0)
+
+    @property
     def free_area(self) -> Array:
         """Narrowest section of the outside stream [m2].
 

@@ -7,7 +7,7 @@ import msgspec
 
 from crossbank.contract import Comparison, Notice, RateRequest, RateResult, given
 from crossbank_service.errors import CoreError, Fault, Impossible, NotConverged, OutOfRange
-from crossbank_service.rating import _engine, _report
+from crossbank_service.rating import _engine, _report, _uneven
 from crossbank_service.rating._case import Case
 from crossbank_service.rating._door import enter
 from crossbank_service.rating._methods import other_methods
@@ -44,16 +44,16 @@ def rate(requests: Sequence[RateRequest]) -> list[RateResult | CoreError]:
 
 
 def _answers(cases: list[Case]) -> list[RateResult | CoreError]:
-    rated = _engine.perform([_engine.adiabatic(case) if _without_heat(case) else case for case in cases])
+    rated = _uneven.perform([_engine.adiabatic(case) if _without_heat(case) else case for case in cases])
     out: list[RateResult | CoreError] = []
-    for case, (performance, used) in zip(cases, rated, strict=True):
+    for case, ((performance, used), unevenness) in zip(cases, rated, strict=True):
         if _without_heat(case) and case.inside.kind != "held-surface":
             performance = replace(performance, inside=still_inside(case))  # noqa: PLW2901
         fault = _refusal(case, performance, used)
         if fault is not None:
             out.append(fault)
             continue
-        notices: list[Notice] = remarks(case, performance, used)
+        notices: list[Notice] = remarks(case, performance, used, unevenness)
         out.append(_report.result(case, performance, used, notices))
     return _with_comparisons(cases, out)
 
@@ -113,7 +113,7 @@ def _with_comparisons(
         and not case.idle
         for role, slug, variant in other_methods(case)
     ]
-    rated = _engine.perform([variant for *_, variant in variants])
+    rated = [found for found, _ in _uneven.perform([variant for *_, variant in variants])]
     lists: dict[int, list[Comparison]] = {}
     for (i, role, slug, _), (performance, used) in zip(variants, rated, strict=True):
         if not one(performance.change) <= DUTY_CHANGE_TOLERANCE:

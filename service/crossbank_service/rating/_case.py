@@ -79,13 +79,22 @@ class SectionInput:
     fin_conductivity: Curve
     bond: float
     attachment: str | None = None
+    yaw: float = 0.0
+    counted_from: int = 0
     heat_method: str = ""
     drop_method: str = ""
 
     @property
     def shape(self) -> tuple[object, ...]:
         """What sections of one array share."""
-        return (self.first, self.last, self.kind, self.heat_method, self.drop_method)
+        return (
+            self.first,
+            self.last,
+            self.kind,
+            self.heat_method,
+            self.drop_method,
+            self.counted_from,
+        )
 
 
 @dataclass(frozen=True)
@@ -103,6 +112,14 @@ class Case:
         over that of the dry gas, mole fractions; None for every other fluid.
     methods : dict
         Slug by role, inside.
+    cavities, cavity_depth : int, float
+        How many, and their depth together [m].
+    lanes : tuple
+        Width [m] and strips of each lane beside the tubes.
+    zones : tuple
+        Area share and velocity ratio of each zone of the face; empty for an even stream.
+    bypass : float
+        Share of the outside stream that passes by the bank.
     idle : str or None
         Why the case exchanges no heat (a notice code); it is then rated with the heat balance left out.
     """
@@ -121,6 +138,11 @@ class Case:
     property_state: str
     methods: dict[str, str]
     idle: str | None = None
+    cavities: int = 0
+    cavity_depth: float = 0.0
+    lanes: tuple[tuple[float, int], ...] = ()
+    zones: tuple[tuple[float, float], ...] = ()
+    bypass: float = 0.0
     assumed: tuple[Assumed, ...] = field(default_factory=tuple)
     molar_ratio: float = MASS_RATIO
     water_mole_fraction: float | None = None
@@ -135,6 +157,11 @@ class Case:
     def finned(self) -> bool:
         """Whether any row has fins."""
         return any(section.kind != "plain" for section in self.sections)
+
+    @property
+    def uneven(self) -> bool:
+        """Whether part of the outside stream passes by the bank, or crosses it unevenly."""
+        return bool(self.lanes or self.zones or self.bypass)
 
     @property
     def span(self) -> float:

@@ -30,6 +30,7 @@ from crossbank_service.rating._flow_door import mass_flow, outside_pressure
 from crossbank_service.rating._gas_door import gas_assumptions
 from crossbank_service.rating._methods import choose_inside, choose_outside
 from crossbank_service.rating._surface_door import bond, sections_of
+from crossbank_service.rating._zone_door import zones_of
 
 PASS_LOSS_HEADS = 1.5  # entry 0.5 and exit 1.0 velocity heads, headers between passes alike
 VAPOUR_ENTRY_HEADS = 0.5
@@ -84,7 +85,9 @@ def enter(request: RateRequest) -> Case | CoreError:
         )
     if not _has_free_section(request, sections, faults):
         return faults.error()
-    face_area = float(bank_of(sections[:1]).face_area[0])
+    lanes = sum(lane.width_m for lane in request.bank.layout.lanes or [])
+    face_area = float(bank_of(sections[:1]).face_area[0]) + lanes * request.bank.layout.tube_length_m
+    zones = zones_of(request.outside, faults)
     flow = mass_flow(request.outside, fluid, pressure, face_area, faults)
     found = composition_of(fluid)
     methods = choose_inside(request, inside.kind, faults)
@@ -108,6 +111,11 @@ def enter(request: RateRequest) -> Case | CoreError:
         segments=_segments(request, inside, circuit),
         property_state=property_state,
         methods=methods,
+        cavities=len(request.bank.layout.cavities or []),
+        cavity_depth=sum(cavity.depth_m for cavity in request.bank.layout.cavities or []),
+        lanes=tuple((lane.width_m, given(lane.strips)) for lane in request.bank.layout.lanes or []),
+        zones=zones,
+        bypass=given(request.outside.bypass_fraction),
         assumed=_assumed(request, inside, pressure, sections) + gas_assumptions(request, found),
     )
     return replace(case, idle=_idle(case))

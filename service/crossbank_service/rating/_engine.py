@@ -41,6 +41,9 @@ def adiabatic(case: Case) -> Case:
         outside_flow=case.outside_flow or STILL_FLOW,
         segments=1,
         methods={},
+        zones=(),
+        lanes=(),
+        bypass=0.0,
     )
 
 
@@ -61,7 +64,7 @@ def perform(cases: Sequence[Case]) -> list[Rated]:
             for place, i in enumerate(chunk):
                 out[i] = (
                     single[place],
-                    _distinct([each.of_case(place) for each in found]),
+                    distinct([each.of_case(place) for each in found]),
                 )
     return [each for each in out if each is not None]
 
@@ -116,7 +119,7 @@ def _moisture(cases: Sequence[Case]) -> Moisture | None:
     )
 
 
-def _distinct(used: list[MethodRange]) -> tuple[MethodRange, ...]:
+def distinct(used: list[MethodRange]) -> tuple[MethodRange, ...]:
     """The methods of a case: row groups that share one say it once, out of range if it is in either."""
     kept: dict[tuple[str, str], MethodRange] = {}
     for each in used:
@@ -155,6 +158,8 @@ def _section(sections: Sequence[SectionInput]) -> Section:
         bond=np.array([section.bond for section in sections]),
         heat_method=method("outside_heat_transfer", first.heat_method),
         drop_method=method("outside_pressure_drop", first.drop_method),
+        yaw=np.array([section.yaw for section in sections]),
+        counted_from=first.counted_from,
     )
 
 

@@ -125,6 +125,7 @@ def film(
         names = (*method.inputs, *(name for name in method.options if name in values))
         nusselt = nusselt * method.row_share(row=row, **{name: values[name] for name in names})
     h = nusselt * values["conductivity"] / spread(section.bank.root_diameter, bulk)
+    h = h * spread(section.heat_yaw, bulk)
     return OutsideFilm(
         h, np.broadcast_to(values["reynolds"], h.shape), np.broadcast_to(values["prandtl"], h.shape)
     )
@@ -199,7 +200,7 @@ def _friction(
     if method.fixed_loss is not None:
         names = (*method.inputs, *(name for name in method.options if name in values))
         heads = heads + method.fixed_loss(**{name: values[name] for name in names})
-    friction = heads / rows * flux**2 / (2.0 * here.density_kg_m3)
+    friction = heads / rows * flux**2 / (2.0 * here.density_kg_m3) * spread(section.drop_yaw, bulk)
     return np.broadcast_to(loss, bulk.shape), values["reynolds"], np.broadcast_to(friction, bulk.shape)
 
 

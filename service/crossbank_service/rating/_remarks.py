@@ -11,14 +11,19 @@ from crossbank_service.rating._performance import InsideFound, OutsideFound, Per
 from crossbank_service.rating._ranges import MethodRange
 from crossbank_service.rating._report import one
 from crossbank_service.rating._surface_door import half_gap
+from crossbank_service.rating._uneven import Unevenness
 from crossbank_service.rating.notices import notice
 
 VAPOUR_PRESSURE_SHARE = 0.1
 
 
-def remarks(case: Case, found: Performance, used: tuple[MethodRange, ...]) -> list[Notice]:
+def remarks(
+    case: Case, found: Performance, used: tuple[MethodRange, ...], unevenness: Unevenness | None
+) -> list[Notice]:
     """All notices of a case."""
     out = []
+    if unevenness is not None and not case.idle:
+        out.append(_uneven_remark(unevenness))
     if case.idle:
         out.append(notice(case.idle, pointer=_idle_pointer(case)))
     out += _fluid_remarks(case, found)
@@ -42,6 +47,16 @@ def _idle_pointer(case: Case) -> str | None:
     if case.idle == "no-flow":
         return "/outside/flow" if case.outside_flow == 0.0 else "/inside/flow_kg_s"
     return "/outside/inlet_temperature_k"
+
+
+def _uneven_remark(found: Unevenness) -> Notice:
+    passing = f"{found.bypass:.1%} of the stream passes the tubes unheated; " if found.bypass > 0.0 else ""
+    return notice(
+        "uneven-stream",
+        f"{passing}against an even stream through the whole bank the duty is {found.loss:.2%} less, and the streams "
+        f"behind the bank differ by {found.spread:.1f} K before they mix.",
+        "/outside/distribution" if found.bypass == 0.0 else "/outside",
+    )
 
 
 def _layout_remarks(case: Case) -> list[Notice]:

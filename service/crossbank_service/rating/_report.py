@@ -229,14 +229,15 @@ def _geometry(case: Case, found: Performance, banks: list[TubeBank]) -> Geometry
 
     masses = [one(bank.metal_mass) for bank in banks]
     metal = sum(masses) if all(masses) else None
+    lanes = sum(width for width, _ in case.lanes)
     volume = total("inside_volume")
     filling = 0.0 if found.inside is None else one(found.inside.density) * volume
     return GeometryResult(
         tube_count=round(total("tube_count")),
-        width_m=one(banks[0].width),
+        width_m=one(banks[0].width) + lanes,
         height_m=case.bank["tube_length"],
-        depth_m=one(banks[0].depth),
-        face_area_m2=one(banks[0].face_area),
+        depth_m=_depth(case, banks[0]),
+        face_area_m2=one(banks[0].face_area) + lanes * case.bank["tube_length"],
         free_flow_area_m2=min(one(bank.free_area) for bank in banks),
         outside_area_m2=total("outside_area"),
         bare_area_m2=total("bare_area"),
@@ -246,6 +247,15 @@ def _geometry(case: Case, found: Performance, banks: list[TubeBank]) -> Geometry
         dry_mass_kg=metal,
         operating_mass_kg=None if metal is None else metal + filling,
     )
+
+
+def _depth(case: Case, bank: TubeBank) -> float:
+    """Extent along the outside stream: the bundles one by one, and the cavities between them [m]."""
+    bundles, pitch = case.cavities + 1, case.bank["longitudinal_pitch"]
+    if bank.fins is not None and bank.fins.kind == "plate":
+        return case.circuit.rows * pitch + case.cavity_depth
+    reach = bundles * one(bank.surface.envelope_diameter)
+    return (case.circuit.rows - bundles) * pitch + reach + case.cavity_depth
 
 
 def _wall(case: Case, found: Performance) -> WallResult:

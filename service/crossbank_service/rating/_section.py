@@ -49,6 +49,10 @@ class Section(Cases):
     bond : Array
         Resistance between fin and tube on the bare tube [m2 K/W].
     heat_method, drop_method : Method
+    yaw : Array
+        Of the stream from the normal to the tubes [rad].
+    counted_from : int
+        Row (from 0) at which the correlations begin to count: behind a deep cavity they start anew.
     """
 
     first: int
@@ -59,6 +63,18 @@ class Section(Cases):
     bond: Array
     heat_method: Method
     drop_method: Method
+    yaw: Array
+    counted_from: int = 0
+
+    @property
+    def heat_yaw(self) -> Array:
+        """What yaw leaves of the film coefficient, cos(yaw)^0.6 (ESDU 73031), (N,)."""
+        return np.asarray(np.cos(self.yaw) ** 0.6)
+
+    @property
+    def drop_yaw(self) -> Array:
+        """What yaw leaves of the friction, cos(yaw)^1.8 (from memory), (N,)."""
+        return np.asarray(np.cos(self.yaw) ** 1.8)
 
     @property
     def rows(self) -> slice:

@@ -246,7 +246,7 @@ def _film_by_rows(problem: Problem, bulk: Array, walls: Faces, pressure: Array) 
             walls.outside_film[:, s.rows],
             pressure[:, s.rows],
             walls.fin_mean[:, s.rows],
-            numbers[:, s.rows],
+            numbers[:, s.rows] - s.counted_from,
         )
         for s in problem.sections
     ]

@@ -1,7 +1,8 @@
 """Surfaces at the door: tubes, fins and row groups, checked against each other, as plain numbers."""
 
+import itertools
 import math
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 
 import numpy as np
 
@@ -26,6 +27,8 @@ BOND_BY_ATTACHMENT = {
     "welded": 0.0,
 }
 """Typical resistance between fin and tube on the bare tube [m2 K/W] (from memory; a factor of 2 either way)."""
+
+DEEP_CAVITY_DIAMETERS = 10.0
 
 TOUCHING = 1e-9
 """Fin tips may touch; sums of written-out millimetres miss equality by rounding."""
@@ -57,7 +60,48 @@ def sections_of(bank: Bank, faults: Faults) -> tuple[SectionInput, ...]:
                 group.tube.wall_thickness_m,
                 "m",
             )
-    return tuple(_section(bank.layout, group, faults) for group in groups)
+    sections = (_section(bank.layout, group, faults) for group in groups)
+    return tuple(piece for section in sections for piece in _parted(bank, section, faults))
+
+
+def _parted(bank: Bank, section: SectionInput, faults: Faults) -> list[SectionInput]:
+    """A section cut at the cavities within it.
+
+    Behind a cavity of ten diameters or more the stream has calmed and the correlations count rows anew; nearer bundles
+    count on, since their wakes still meet.
+    """
+    starts = _bundles(bank, faults)
+    edges = [section.first, *(s for s, _, _ in starts if section.first < s < section.last), section.last]
+    out = []
+    for first, last in itertools.pairwise(edges):
+        begin, end = next((b, e) for s, b, e in reversed(starts) if s <= first)
+        numbers = {**section.bank, "rows": float(end - begin), "covered_rows": float(last - first)}
+        out.append(replace(section, first=first, last=last, bank=numbers, counted_from=begin))
+    return out
+
+
+def _bundles(bank: Bank, faults: Faults) -> list[tuple[int, int, int]]:
+    """Where each bundle starts, and the first and last + 1 of the rows that are counted with it (from 0)."""
+    rows, deep = bank.layout.rows, DEEP_CAVITY_DIAMETERS * bank.tube.outer_diameter_m
+    cuts = [(0, True)]
+    for i, cavity in enumerate(bank.layout.cavities or []):
+        if not cuts[-1][0] < cavity.after_row < rows:
+            faults.refuse(
+                f"/bank/layout/cavities/{i}/after_row",
+                f"Cavities follow each other between rows 1 and {rows}; this one stands after row {cavity.after_row}.",
+                cavity.after_row,
+                "1",
+                at_least=cuts[-1][0] + 1,
+                at_most=rows - 1,
+            )
+            return [(0, 0, rows)]
+        cuts.append((cavity.after_row, cavity.depth_m >= deep))
+    out = []
+    for start, _ in cuts:
+        begin = max(c for c, anew in cuts if anew and c <= start)
+        end = min((c for c, anew in cuts if anew and c > start), default=rows)
+        out.append((start, begin, end))
+    return out
 
 
 def half_gap(section: SectionInput) -> float:
@@ -141,6 +185,7 @@ def _section(layout: Layout, group: _Rows, faults: Faults) -> SectionInput:
         fin_conductivity=fin_conductivity,
         bond=bond(fins),
         attachment=None if fins is None or isinstance(fins, Plate) else fins.attachment,
+        yaw=given(layout.yaw_rad),
     )
 
 

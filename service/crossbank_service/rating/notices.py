@@ -88,6 +88,11 @@ _KINDS = (
         "A gas mixture is notably off the ideal gas it was rated as.",
     ),
     NoticeKind(
+        "uneven-stream",
+        "caution",
+        "The outside stream does not cross the bank evenly: the duty is less, and the streams behind it differ.",
+    ),
+    NoticeKind(
         "method-out-of-range",
         "caution",
         "A correlation was used outside the range it is published for; its result is an extrapolation.",

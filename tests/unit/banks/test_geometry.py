@@ -25,7 +25,9 @@ _NUMBERS = {
 
 
 def _bank(**members: float) -> TubeBank:
-    return TubeBank(**{name: np.array([value]) for name, value in {**_NUMBERS, **members}.items()})
+    numbers = {**_NUMBERS, **members}
+    numbers.setdefault("covered_rows", numbers["rows"])
+    return TubeBank(**{name: np.array([value]) for name, value in numbers.items()})
 
 
 def _one(values: np.ndarray) -> float:
@@ -144,6 +146,7 @@ def test_many_banks_stand_side_by_side() -> None:
     """Banks in one array keep their own numbers, and a selection keeps them too."""
     pitches = np.array([0.05, 0.06, 0.075])
     columns = {name: np.full(3, value) for name, value in _NUMBERS.items()}
+    columns["covered_rows"] = columns["rows"]
     columns["transverse_pitch"] = pitches
     columns["side_gap"] = 0.5 * (pitches - 0.025)
     together = TubeBank(**columns)

@@ -222,14 +222,17 @@ def test_gas_that_condenses_on_the_tubes_is_named() -> None:
 
 
 def test_dew_on_the_tubes_is_named() -> None:
-    """Humid air on cold tubes is computed dry, and says so with both temperatures."""
-    found = rated(
-        body(
-            inside={**WATER, "inlet_temperature_k": 280.0},
-            outside={"fluid": {"kind": "moist-air", "relative_humidity": 0.9}, "inlet_temperature_k": 303.15},
-        )
+    """Humid air on cold tubes is computed wet row by row; lumped it is computed dry, and says so."""
+    humid = body(
+        inside={**WATER, "inlet_temperature_k": 280.0},
+        outside={"fluid": {"kind": "moist-air", "relative_humidity": 0.9}, "inlet_temperature_k": 303.15},
     )
-    notice = next(notice for notice in found.notices if notice.code == "surface-below-dew-point")
+    wet = rated(humid)
+    assert "wet-surface" in _codes(wet)
+    assert wet.latent_duty_w < 0.0
+    assert wet.sensible_duty_w + wet.latent_duty_w == pytest.approx(wet.duty_w)
+    lumped = rated({**humid, "detail": {"resolution": "bank"}})
+    notice = next(notice for notice in lumped.notices if notice.code == "surface-below-dew-point")
     assert "301.3" in notice.text  # dew point of 30 C, 90 %: 28.2 C
     dry = rated(
         body(
@@ -240,7 +243,7 @@ def test_dew_on_the_tubes_is_named() -> None:
             },
         )
     )
-    assert "surface-below-dew-point" not in _codes(dry)
+    assert not {"surface-below-dew-point", "wet-surface"} & set(_codes(dry))
 
 
 def test_freezing_of_the_inside_liquid_is_named() -> None:
