@@ -2,6 +2,7 @@
 
 from collections.abc import Iterator
 from dataclasses import dataclass
+from functools import cache
 from itertools import pairwise
 from typing import Any
 
@@ -39,13 +40,20 @@ def broken_rules(request: Struct, pointer: str = "") -> list[Broken]:
     return list(_walk(request, pointer))
 
 
+@cache
+def _members(kind: type[Struct]) -> tuple[tuple[str, str], ...]:
+    return tuple((f.name, f.encode_name) for f in msgspec.structs.fields(kind))
+
+
 def _walk(value: Any, pointer: str) -> Iterator[Broken]:
     if isinstance(value, Request):
         yield from _exactly_one(value, pointer)
         yield from _same_length(value, pointer)
     if isinstance(value, Struct):
-        for field in msgspec.structs.fields(value):
-            yield from _walk(getattr(value, field.name), f"{pointer}/{field.encode_name}")
+        for name, wire in _members(type(value)):
+            member = getattr(value, name)
+            if isinstance(member, Struct | list):
+                yield from _walk(member, f"{pointer}/{wire}")
     elif isinstance(value, list):
         for index, item in enumerate(value):
             yield from _walk(item, f"{pointer}/{index}")

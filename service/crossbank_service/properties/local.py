@@ -86,19 +86,30 @@ class LocalMedium:
     def _x(self, t: Array) -> Array:
         return np.asarray(np.clip((t - spread(self.middle, t)) / spread(self.half, t), -1.0, 1.0))
 
+    def _four(self, x: Array) -> Array:
+        """The four properties at once, along the first axis."""
+        n, k = self.density.shape
+        stacked = np.stack((self.density, self.heat_capacity, self.conductivity, self.viscosity))
+        columns = np.ascontiguousarray(np.moveaxis(stacked, -1, 0)).reshape((k, 4, n) + (1,) * (x.ndim - 1))
+        value = columns[-1] * x
+        value += columns[-2]
+        for c in range(k - 3, -1, -1):
+            value *= x
+            value += columns[c]
+        return np.asarray(value)
+
     def at(self, temperature_k: Array, pressure_pa: Array) -> State:
         """Properties at temperatures of shape (N, ...); ``pressure_pa`` broadcasts."""
         x = self._x(temperature_k)
-        density = _horner(self.density, x)
-        viscosity = _horner(self.viscosity, x)
+        density, heat_capacity, conductivity, viscosity = self._four(x)
         if self.gas:
             density = density / temperature_k * (pressure_pa / spread(self.pressure, x))
         else:
             viscosity = np.exp(viscosity)
         return State(
             density_kg_m3=density,
-            heat_capacity_j_kg_k=_horner(self.heat_capacity, x),
-            conductivity_w_m_k=_horner(self.conductivity, x),
+            heat_capacity_j_kg_k=heat_capacity,
+            conductivity_w_m_k=conductivity,
             viscosity_pa_s=viscosity,
         )
 
@@ -126,8 +137,10 @@ class LocalMedium:
 
 def _horner(coefficients: Array, x: Array) -> Array:
     shape = (-1,) + (1,) * (x.ndim - 1)
-    value = np.broadcast_to(coefficients[:, -1].reshape(shape), x.shape).copy()
-    for k in range(coefficients.shape[1] - 2, -1, -1):
+    columns = coefficients.T.reshape((coefficients.shape[1], *shape))
+    value = columns[-1] * x
+    value += columns[-2]
+    for k in range(len(columns) - 3, -1, -1):
         value *= x
-        value += coefficients[:, k].reshape(shape)
-    return value
+        value += columns[k]
+    return np.asarray(value)

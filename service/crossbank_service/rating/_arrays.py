@@ -19,6 +19,11 @@ class Cases:
         """The same members for a selection of the cases."""
         return type(self)(*(_take(getattr(self, name), index) for name in _names(type(self))))
 
+    def each(self, n: int) -> list[Self]:
+        """The cases one by one, as views."""
+        columns = [_each(getattr(self, name), n) for name in _names(type(self))]
+        return [type(self)(*members) for members in zip(*columns, strict=True)]
+
     def put(self, index: Index, other: Self) -> None:
         """Write the cases of ``other`` at ``index`` of this one's arrays, in place."""
         for name in _names(type(self)):
@@ -48,6 +53,14 @@ def _take(value: Any, index: Index | slice) -> Any:
     if isinstance(value, tuple):
         return tuple(_take(each, index) for each in value)
     return value.take(index) if hasattr(value, "take") else value
+
+
+def _each(value: Any, n: int) -> Any:
+    if isinstance(value, np.ndarray):
+        return list(value[:, None])
+    if value is None or not isinstance(value, Cases):
+        return [value] * n
+    return value.each(n)
 
 
 def _blank(value: Any, n: int) -> Any:

@@ -33,8 +33,8 @@ from crossbank_service.rating._surface_door import bond, sections_of
 
 PASS_LOSS_HEADS = 1.5  # entry 0.5 and exit 1.0 velocity heads, headers between passes alike
 VAPOUR_ENTRY_HEADS = 0.5
-SEGMENTS_ONE_PASS = 16
-SEGMENTS_MORE_PASSES = 8
+SEGMENTS_ONE_PASS = 24
+SEGMENTS_MORE_PASSES = 12
 SEGMENTS_CONDENSING = 8
 
 
@@ -82,6 +82,8 @@ def enter(request: RateRequest) -> Case | CoreError:
             "bank",
             one_of=("row",),
         )
+    if not _has_free_section(request, sections, faults):
+        return faults.error()
     face_area = float(bank_of(sections[:1]).face_area[0])
     flow = mass_flow(request.outside, fluid, pressure, face_area, faults)
     found = composition_of(fluid)
@@ -109,6 +111,21 @@ def enter(request: RateRequest) -> Case | CoreError:
         assumed=_assumed(request, inside, pressure, sections) + gas_assumptions(request, found),
     )
     return replace(case, idle=_idle(case))
+
+
+def _has_free_section(request: RateRequest, sections: tuple[SectionInput, ...], faults: Faults) -> bool:
+    for section in sections:
+        free = float(bank_of([section]).free_area[0])
+        if free <= 0.0:
+            faults.refuse(
+                "/bank/layout/side_gap_m",
+                "No free section is left: the side gaps take away more than the gaps between the tubes give.",
+                request.bank.layout.side_gap_m,
+                "m",
+                at_least=section.bank["side_gap"] - 0.5 * free / section.bank["tube_length"],
+            )
+            return False
+    return True
 
 
 def _circuit(bank: Bank, faults: Faults) -> Circuit | None:

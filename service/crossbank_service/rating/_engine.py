@@ -57,9 +57,10 @@ def perform(cases: Sequence[Case]) -> list[Rated]:
             chunk = members[start : start + size]
             problem = problem_of([cases[i] for i in chunk])
             performance, found = rate_problem(problem, first.property_state)
+            single = performance.each(len(chunk))
             for place, i in enumerate(chunk):
                 out[i] = (
-                    performance.take(slice(place, place + 1)),
+                    single[place],
                     _distinct([each.of_case(place) for each in found]),
                 )
     return [each for each in out if each is not None]

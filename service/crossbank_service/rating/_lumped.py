@@ -14,7 +14,7 @@ from crossbank_service.rating._arrays import Array, Cases
 from crossbank_service.rating._condensing import CondensingStream
 from crossbank_service.rating._outside import OutsideDrop, OutsideFilm
 from crossbank_service.rating._single_phase import SinglePhaseStream
-from crossbank_service.rating._solver import DUTY_TOLERANCE, HeldSurface, Problem
+from crossbank_service.rating._solver import DUTY_TOLERANCE, LEAST_RISE_K, HeldSurface, Problem
 from crossbank_service.rating._wall import Faces, Resistances, faces, in_series
 
 MAX_ITERATIONS = 200
@@ -179,7 +179,7 @@ class _Lumped:
             inside_outlet = inside_mean = temperature
         new_outlet = stream.inlet_temperature + duty / c_outside
         walls = faces(r, inside_mean, duty / area)
-        scale = np.maximum(np.abs(duty), 1e-9 * c_outside)
+        scale = np.maximum(np.abs(duty), LEAST_RISE_K * c_outside)
         change = np.full_like(duty, np.inf) if before is None else np.abs(duty - before.duty) / scale
         drop = self._drop(new_outlet, walls)
         if before is not None:

@@ -105,16 +105,20 @@ def solve_passes(
     stream = np.zeros((n, segments, passes + 1))
     stream[:, :, passes] = outside_inlet[:, None]
     for r, p in enumerate(circuit.pass_of_row):
-        tube = np.zeros((n, passes + 1))
-        tube[:, p] = 1.0
-        inlet_out[:, r] = stream
+        # in a counter arrangement a row knows of its own pass, of later ones and of the outside inlet only
+        known = slice(p if circuit.against else 0, passes + 1)
+        tube = np.zeros((n, passes + 1))[:, known]
+        tube[:, p - known.start] = 1.0
+        flowing = stream[:, :, known]
+        inlet_out[:, r, :, known] = flowing
+        outwards, inwards = to_outside[:, r, :, None], to_inside[:, r, :, None]
         order = range(segments - 1, -1, -1) if circuit.backwards(p) else range(segments)
         for s in order:
-            inlet_in[:, r, s] = tube
-            difference = tube - stream[:, s]
-            stream[:, s] += to_outside[:, r, s, None] * difference
-            tube = tube - to_inside[:, r, s, None] * difference
-        row_end[:, r] = tube
+            inlet_in[:, r, s, known] = tube
+            difference = tube - flowing[:, s]
+            flowing[:, s] += outwards[:, s] * difference
+            tube = tube - inwards[:, s] * difference
+        row_end[:, r, known] = tube
 
     basis = np.empty((n, passes + 1))
     basis[:, 0] = inside_inlet

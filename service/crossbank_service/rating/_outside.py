@@ -5,9 +5,11 @@ from dataclasses import dataclass
 import numpy as np
 
 from crossbank_service.methods.record import Method
-from crossbank_service.properties import Medium, State
+from crossbank_service.properties import Medium
 from crossbank_service.rating._arrays import Array, Cases, spread
 from crossbank_service.rating._section import Section
+
+LEAST_HALF_STEP_K = 0.05
 
 Values = dict[str, Array]
 
@@ -201,14 +203,15 @@ def _friction(
     return np.broadcast_to(loss, bulk.shape), values["reynolds"], np.broadcast_to(friction, bulk.shape)
 
 
-def secant_heat_capacity(medium: Medium, first: Array, second: Array, pressure: Array, here: State) -> Array:
-    """Heat capacity that carries the enthalpy between two temperatures exactly [J/(kg K)]."""
-    step = second - first
-    # below a hundredth of a kelvin the difference quotient only adds rounding to the local value
-    small = np.abs(step) < 1e-2
-    safe = np.where(small, 1.0, step)
-    rise = medium.enthalpy(second, pressure) - medium.enthalpy(first, pressure)
-    return np.where(small, here.heat_capacity_j_kg_k, rise / safe)
+def secant_heat_capacity(medium: Medium, first: Array, second: Array, pressure: Array) -> Array:
+    """Heat capacity that carries the enthalpy between two temperatures exactly [J/(kg K)].
+
+    Steps too small to divide by are widened about their middle, so that the value stays the slope of the enthalpy.
+    """
+    middle, half = 0.5 * (first + second), 0.5 * (second - first)
+    half = np.where(np.abs(half) < LEAST_HALF_STEP_K, LEAST_HALF_STEP_K, half)
+    rise = medium.enthalpy(middle + half, pressure) - medium.enthalpy(middle - half, pressure)
+    return np.asarray(rise / (2.0 * half))
 
 
 def temperature_of(medium: Medium, enthalpy: Array, start: Array, pressure: Array) -> Array:

@@ -12,7 +12,7 @@ from crossbank_service.rating._condensing import CondensingFilm, CondensingStrea
 from crossbank_service.rating._lumped import Lump
 from crossbank_service.rating._outside import mass_flux, temperature_of
 from crossbank_service.rating._single_phase import SinglePhaseFilm, SinglePhaseStream
-from crossbank_service.rating._solver import HeldSurface, Problem, Solution
+from crossbank_service.rating._solver import LEAST_RISE_K, HeldSurface, Problem, Solution
 from crossbank_service.rating._wall import Faces, Resistances
 
 SHARES = ("outside", "outside_fouling", "fin_bond", "wall", "inside_fouling", "inside")
@@ -199,11 +199,11 @@ def of_solution(problem: Problem, found: Solution) -> Performance:
     if isinstance(problem.inside, SinglePhaseStream) and isinstance(found.inside, SinglePhaseFilm):
         assert inside is not None
         medium, s = problem.inside.medium, problem.inside
-        h_in = medium.enthalpy(s.inlet_temperature, s.inlet_pressure)
-        # at the pressure the stream enters with: what it loses in pressure stays in it as enthalpy
-        given_off = s.mass_flow * (h_in - medium.enthalpy(inside.outlet_temperature, s.inlet_pressure))
+        at = found.inside.mean_pressure
+        h_in = medium.enthalpy(s.inlet_temperature, at)
+        given_off = s.mass_flow * (h_in - medium.enthalpy(inside.outlet_temperature, at))
     scale = np.maximum(
-        np.abs(duty), 1e-9 * stream.mass_flow * stream.medium.at(outlet, p_in).heat_capacity_j_kg_k
+        np.abs(duty), LEAST_RISE_K * stream.mass_flow * stream.medium.at(outlet, p_in).heat_capacity_j_kg_k
     )
     rows = RowsFound(
         heat=heat.sum(axis=2),
@@ -404,7 +404,7 @@ def single_phase_found(
 ) -> InsideFound:
     """The inside stream of a row-resolved single-phase rating."""
     field = found.field
-    outlet = _single_phase.outlet_temperature(stream, problem.circuit, field, film)
+    outlet = _single_phase.outlet_temperature(stream, problem.circuit, field, film.mean_pressure)
     ends = np.stack([stream.inlet_temperature, outlet], axis=1)
     p_ends = np.stack([stream.inlet_pressure, film.pressure[:, -1]], axis=1)
     density = stream.medium.at(ends, p_ends).density_kg_m3

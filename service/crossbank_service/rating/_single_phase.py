@@ -42,7 +42,8 @@ class SinglePhaseFilm(Cases):
     """Film and flow in every cell, (N, rows, segments) unless said otherwise.
 
     ``capacity`` is that of the whole row [W/K], ``mixing`` (N, passes) [K], ``row_drop`` (N, rows) [Pa] with the
-    losses of its pass, ``pressure`` (N, passes + 1) from the inlet header to the outlet header.
+    losses of its pass, ``pressure`` (N, passes + 1) from the inlet header to the outlet header, ``mean_pressure``
+    (N,) of both, at which enthalpies are taken.
     """
 
     coefficient: Array
@@ -54,6 +55,7 @@ class SinglePhaseFilm(Cases):
     row_drop: Array
     pressure: Array
     flux: Array
+    mean_pressure: Array
 
 
 @dataclass(frozen=True)
@@ -129,7 +131,9 @@ def film(
     flow = row_flow(stream, circuit)
     flux = (flow / (bank.tubes_per_row * bank.bore_section)[:, None])[:, :, None]
     at = local(bank, stream, t, face, flux, middle)
-    capacity = secant_heat_capacity(stream.medium, field.inside_in, field.inside_out, middle, at.state)
+    # enthalpies at one pressure throughout: what a stream loses in pressure stays in it as enthalpy
+    mean = 0.5 * (pressure[:, 0] + pressure[:, -1])
+    capacity = secant_heat_capacity(stream.medium, field.inside_in, field.inside_out, mean[:, None, None])
     along = (at.gradient * spread(bank.tube_length, t) / t.shape[2]).sum(axis=2)
     first, last = row_ends(field, circuit)
     row_pressure = pressure[:, of_pass], pressure[:, of_pass + 1]
@@ -144,7 +148,7 @@ def film(
     for p, members in enumerate(circuit.rows_of_pass):
         index = np.array(members)
         headers.append(headers[-1] - row_drop[:, index].mean(axis=1))
-        mixing[:, p] = _mixing(stream.medium, last[:, index], pressure[:, p + 1])
+        mixing[:, p] = _mixing(stream.medium, last[:, index], mean)
     floor = 0.1 * stream.inlet_pressure[:, None]
     return SinglePhaseFilm(
         coefficient=at.coefficient,
@@ -156,6 +160,7 @@ def film(
         row_drop=row_drop,
         pressure=np.maximum(np.stack(headers, axis=1), floor),
         flux=flux[:, :, 0],
+        mean_pressure=mean,
     )
 
 
@@ -191,9 +196,9 @@ def balance(
 
 
 def outlet_temperature(
-    stream: SinglePhaseStream, circuit: Circuit, field: Field, film_now: SinglePhaseFilm
+    stream: SinglePhaseStream, circuit: Circuit, field: Field, mean_pressure: Array
 ) -> Array:
     """Mixed outlet temperature of the last pass [K], (N,)."""
     index = np.array(circuit.rows_of_pass[-1])
     last = row_ends(field, circuit)[1][:, index]
-    return np.asarray(last.mean(axis=1) + _mixing(stream.medium, last, film_now.pressure[:, -1]))
+    return np.asarray(last.mean(axis=1) + _mixing(stream.medium, last, mean_pressure))

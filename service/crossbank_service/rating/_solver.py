@@ -28,6 +28,8 @@ RESISTANCE_TOLERANCE = 1e-8
 FILM_TOLERANCE = 1e-5
 PRESSURE_TOLERANCE = 1e-7
 LEAST_SECANT_STEP = 1e-8
+LEAST_RISE_K = 1e-4
+"""Duties are judged against at least this rise of the outside stream: below it temperatures are rounding."""
 SLOPES = (-4.0, 0.6)
 
 
@@ -224,8 +226,7 @@ def _cell_area(problem: Problem, like: Array) -> Array:
 def _capacity_outside(problem: Problem, first: Array, second: Array, pressure: Array) -> Array:
     """Capacity rate of the outside stream through each cell [W/K], secant between the cell's ends."""
     medium, p = problem.outside.medium, pressure[:, :1, None]
-    here = medium.at(0.5 * (first + second), p)
-    cp = _outside.secant_heat_capacity(medium, first, second, p, here)
+    cp = _outside.secant_heat_capacity(medium, first, second, p)
     return cp * spread(problem.outside.mass_flow / problem.segments, first)
 
 
@@ -374,7 +375,7 @@ def _step(
         pressure_change = np.abs(pressure / now.outside_pressure - 1.0).max(axis=1)
     change = np.maximum(change, pressure_change / PRESSURE_TOLERANCE)
     duty = field.heat.sum(axis=(1, 2))
-    scale = np.maximum(np.abs(duty), 1e-9 * capacity[:, 0].sum(axis=1))
+    scale = np.maximum(np.abs(duty), LEAST_RISE_K * capacity[:, 0].sum(axis=1))
     duty_change = np.abs(duty - now.duty) / scale
     new = Iterate(
         field,
