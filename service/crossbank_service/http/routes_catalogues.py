@@ -18,9 +18,15 @@ from crossbank.contract import (
 )
 from crossbank_service import identity, rating
 from crossbank_service.http.calls import answer_response
-from crossbank_service.http.catalogue_records import fluid_record, material_record
+from crossbank_service.http.catalogue_records import fluid_record, fuel_record, gas_record, material_record
 from crossbank_service.http.media import negotiate, write
-from crossbank_service.properties import fluid_records, material_records
+from crossbank_service.properties import (
+    fluid_records,
+    fuel_records,
+    gas_records,
+    material_records,
+    mixture_records,
+)
 
 
 @get("/v1", operation_id="service", opt={"gives": ServiceInfo, "tag": "Service"})
@@ -45,7 +51,7 @@ async def service(request: Request[Any, Any, Any]) -> Response[bytes]:
 async def fluids(request: Request[Any, Any, Any]) -> Response[bytes]:
     """List the fluids.
 
-    Names, aliases, limits, sources, and how well each is known.
+    Names, aliases, limits, sources, and how well each is known; the gases that mixtures may hold; typical fuels.
     """
     return _answer(request, _fluids)
 
@@ -54,7 +60,7 @@ async def fluids(request: Request[Any, Any, Any]) -> Response[bytes]:
 async def materials(request: Request[Any, Any, Any]) -> Response[bytes]:
     """List the materials.
 
-    Conductivity by temperature, density, sources and doubts.
+    Conductivity, elastic modulus and expansion by temperature, density, sources and doubts.
     """
     return _answer(request, _materials)
 
@@ -82,7 +88,11 @@ def _encoded(build: Callable[[], msgspec.Struct], media: str) -> bytes:
 
 
 def _fluids() -> FluidRecords:
-    return FluidRecords(fluids=[fluid_record(entry) for entry in fluid_records()])
+    return FluidRecords(
+        fluids=[fluid_record(entry) for entry in (*fluid_records(), *mixture_records())],
+        gases=[gas_record(entry) for entry in gas_records()],
+        fuels=[fuel_record(entry) for entry in fuel_records()],
+    )
 
 
 def _materials() -> MaterialRecords:

@@ -65,8 +65,8 @@ def _acid_remarks(case: Case, found: Performance) -> list[Notice]:
             "surface-below-acid-dew-point",
             f"The tube metal reaches {coldest:.2f} K, below the sulfuric acid dew point of about {dew:.0f} K (sulfur "
             f"trioxide taken as {SULFUR_TRIOXIDE_SHARE:.0%} of the {dioxide * 1e6:.3g} ppm of sulfur dioxide; "
-            f"published laws differ by {float(points.spread_k):.0f} K): it will corrode. Acid deposits and their wash water burn "
-            "skin and eyes.",
+            f"published laws differ by {float(points.spread_k):.0f} K): it will corrode. Acid deposits "
+            "and their wash water burn skin and eyes.",
             "/outside/fluid",
         )
     ]
@@ -81,8 +81,8 @@ def _radiation_remarks(case: Case, found: Performance) -> list[Notice]:
         notice(
             "gas-radiation-ignored",
             f"The gas reaches {hottest:.0f} K and holds a mole fraction of {share:.3g} of water vapour and carbon "
-            "dioxide: its radiation to the tubes, and any seen from a furnace, is left out. More heat passes than stated, "
-            "and a heated tube's first rows run hotter.",
+            "dioxide: its radiation to the tubes, and any seen from a furnace, is left out. More heat passes than "
+            "stated, and a heated tube's first rows run hotter.",
             "/outside/fluid",
         )
     ]
@@ -103,8 +103,8 @@ def _buoyancy_remarks(found: Performance) -> list[Notice]:
     return [
         notice(
             "buoyancy",
-            f"Gr/Re² reaches {ratio:.3g} in a row (forced convection: below {BUOYANT:g}): the stream is so slow that its "
-            "own buoyancy moves it too. Coefficient, spread over the face and pressure drop may be well off, either way.",
+            f"Gr/Re² reaches {ratio:.3g} in a row (forced convection: below {BUOYANT:g}): the stream is so slow that "
+            "its own buoyancy moves it too. Coefficient, spread over the face and pressure drop may be well off.",
             "/outside/flow",
         )
     ]

@@ -215,7 +215,7 @@ def _overall(case: Case, found: Performance, banks: list[TubeBank]) -> OverallRe
         mean_difference_k=one(o.mean_difference),
         crossflow_correction=some(o.correction),
         effectiveness=some(o.effectiveness),
-        ntu=one(o.ntu),
+        ntu=some(o.ntu),
         closest_approach_k=one(o.closest_approach),
         duty_margin_fraction=None,
         excess_area_fraction=None,

@@ -143,7 +143,7 @@ def test_the_whole_answer_keeps_the_requests_id(
         ("methods", (), "/v1/methods", {"methods": []}),
         ("method", ("zukauskas-1987",), "/v1/methods/zukauskas-1987", {"methods": []}),
         ("method", ("a/b c",), "/v1/methods/a%2Fb%20c", {"methods": []}),
-        ("fluids", (), "/v1/fluids", {"fluids": []}),
+        ("fluids", (), "/v1/fluids", {"fluids": [], "gases": [], "fuels": []}),
         ("materials", (), "/v1/materials", {"materials": []}),
         ("notices", (), "/v1/notices", {"notices": []}),
     ],
