@@ -13,6 +13,7 @@ from crossbank.contract.bank import (
     Curve,
     ElasticModulusCurve,
     ExpansionCurve,
+    Lane,
     Layout,
     Material,
     Plate,

@@ -3,7 +3,8 @@
 Each zone is the bank at a flow of its own, and counts by its share of the face; the inside stream serves every zone
 with its share of the tubes. What passes by the bank, through a duct or through lanes, leaves unheated. The streams mix
 behind the bank. A lane and the bank lie between the same pressures, so their velocities are as the roots of their
-losses: u_lane/u_max = sqrt(n xi/(f L/D_h + K)), D_h twice the lane's width, f and K of a smooth open slot (common practice,
+losses: u_lane/u_max = sqrt(n xi/(f L/D_h + K)), D_h twice the lane's width, f and K of a smooth open slot (common
+practice,
 no source); strips shut a lane by (2 s)^(1/3), s strips a row, as in Taborek's form of Bell's bypass correction (HEDH
 3.3).
 """

@@ -1,6 +1,7 @@
 """Areas, sections, volumes and masses of plain banks: by hand, and against a drawing measured point by point."""
 
 from math import hypot, pi
+from typing import Any
 
 import numpy as np
 import pytest
@@ -27,7 +28,8 @@ _NUMBERS = {
 def _bank(**members: float) -> TubeBank:
     numbers = {**_NUMBERS, **members}
     numbers.setdefault("covered_rows", numbers["rows"])
-    return TubeBank(**{name: np.array([value]) for name, value in numbers.items()})
+    columns: Any = {name: np.array([value]) for name, value in numbers.items()}
+    return TubeBank(**columns)
 
 
 def _one(values: np.ndarray) -> float:
@@ -145,7 +147,7 @@ def test_free_section_of_a_drawing(a: float, b: float, staggered: bool) -> None:
 def test_many_banks_stand_side_by_side() -> None:
     """Banks in one array keep their own numbers, and a selection keeps them too."""
     pitches = np.array([0.05, 0.06, 0.075])
-    columns = {name: np.full(3, value) for name, value in _NUMBERS.items()}
+    columns: Any = {name: np.full(3, value) for name, value in _NUMBERS.items()}
     columns["covered_rows"] = columns["rows"]
     columns["transverse_pitch"] = pitches
     columns["side_gap"] = 0.5 * (pitches - 0.025)

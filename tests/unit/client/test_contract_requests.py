@@ -219,6 +219,8 @@ def test_every_request_number_has_its_unit() -> None:
     for where, number in numbers(parts):
         unit = number["x-unit"]
         name = where.split("/properties/")[-1].split("/")[0]
+        if name == "value":  # of a curve: the member that holds the curve ends in the unit
+            continue
         assert unit not in endings or name.endswith(endings[unit]), where
 
 
