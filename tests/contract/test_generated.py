@@ -121,6 +121,8 @@ def sensible_bodies(draw: st.DrawFn) -> Any:
                 "nitrogen",
                 {"kind": "moist-air", "humidity_ratio": 0.005},
                 {"kind": "moist-air", "relative_humidity": 0.2},
+                {"kind": "gas-mixture", "mole_fractions": {"nitrogen": 0.8, "carbon_dioxide": 0.2}},
+                {"kind": "combustion-gas", "carbon": 1.0, "dry_oxygen_mole_fraction": 0.06},
             ]
         )
     )
@@ -128,7 +130,11 @@ def sensible_bodies(draw: st.DrawFn) -> Any:
         body["bank"]["circuit"] = {"passes": draw(st.sampled_from(divisors))}
     if draw(st.booleans()):
         body["inside"] = {"kind": "held-surface", "temperature_k": draw(st.floats(260.0, 500.0))}
-    fitting = [m.slug for m in in_role("outside_heat_transfer") if layout["arrangement"] in m.arrangements]
+    fitting = [
+        m.slug
+        for m in in_role("outside_heat_transfer")
+        if layout["arrangement"] in m.arrangements and "plain" in m.surfaces
+    ]
     body["methods"] = {"outside_heat_transfer": draw(st.sampled_from(["auto", *fitting]))}
     body["detail"] = {"resolution": draw(st.sampled_from(["row", "bank"]))}
     return body

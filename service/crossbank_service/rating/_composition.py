@@ -37,6 +37,11 @@ class Composition:
     molar_ratio: float
     humidity_ratio: float | None
 
+    def saturates(self, temperature: float, pressure: float) -> bool:
+        """Whether a surface at a temperature [K] is below the dew point; cheaper than the dew point itself."""
+        vapour = self.water * pressure
+        return vapour > 0.0 and float(psychrometrics.saturation_pressure(temperature)) < vapour
+
     def dew_point(self, pressure: float) -> float:
         """Water dew point, frost point below 273.16 K [K]."""
         return float(psychrometrics.saturation_temperature(self.water * pressure))

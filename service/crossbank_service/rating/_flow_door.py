@@ -87,11 +87,10 @@ def _humidity(fluid: FluidInput, pointer: str, instead: str, faults: Faults) -> 
     found = composition_of(fluid)
     if found is not None and found.humidity_ratio is not None:
         return found.humidity_ratio
-    faults.reject(
+    faults.refuse(
         pointer,
         "A dry flow goes with moist air, gas mixtures and combustion gas that have a dry part; this fluid has none "
         f"told apart from its vapour: write '{instead}'.",
         "dry-mass" if instead == "mass" else "dry",
-        one_of=(instead,),
     )
     return 0.0

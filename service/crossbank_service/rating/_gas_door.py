@@ -130,8 +130,8 @@ def _at_inlet(
         return None
     found = composition_of(fluid)
     assert found is not None
-    dew = found.dew_point(pressure) if found.water > 0.0 else 0.0
-    if temperature < dew - 1e-6:
+    if found.saturates(temperature + 1e-6, pressure):
+        dew = found.dew_point(pressure)
         faults.refuse(
             f"{stream}/inlet_temperature_k",
             f"The gas holds a mole fraction of {found.water:.5g} of water and enters below its dew point {dew:.2f} K: "

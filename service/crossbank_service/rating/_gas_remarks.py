@@ -37,9 +37,10 @@ def _water_remarks(case: Case, found: Performance) -> list[Notice]:
     gas = composition_of(case.outside_fluid)
     if gas is None or found.wet is not None:
         return []
-    dew, coldest = gas.dew_point(case.outside_pressure), one(found.outside.face_min)
-    if gas.water == 0.0 or coldest >= dew:
+    coldest = one(found.outside.face_min)
+    if not gas.saturates(coldest, case.outside_pressure):
         return []
+    dew = gas.dew_point(case.outside_pressure)
     return [
         notice(
             "surface-below-dew-point",
@@ -135,8 +136,8 @@ def inside_gas_remarks(fluid: FluidInput, found: InsideFound) -> list[Notice]:
     pointer, coldest = "/inside/fluid", min(one(found.face_min), one(found.bulk_min))
     highest = one(found.outlet_pressure) + max(one(found.drop), 0.0)
     out = density_remarks(fluid, coldest, highest, pointer)
-    dew = gas.dew_point(highest)
-    if gas.water > 0.0 and coldest < dew:
+    if gas.saturates(coldest, highest):
+        dew = gas.dew_point(highest)
         out.append(
             notice(
                 "gas-condenses",
