@@ -31,6 +31,7 @@ LEAST_SECANT_STEP = 1e-8
 LEAST_RISE_K = 1e-4
 """Duties are judged against at least this rise of the outside stream: below it temperatures are rounding."""
 SLOPES = (-4.0, 0.6)
+NO_SLOPES = (0.0, 0.0)
 
 
 @dataclass(frozen=True)
@@ -93,12 +94,12 @@ class Film(Cases):
         """A film without a history."""
         return cls(log, log, log)
 
-    def renewed(self, answer: Array, relax: Array) -> "Film":
+    def renewed(self, answer: Array, relax: Array, slopes: tuple[float, float]) -> "Film":
         """The next value, from what the law answers to this one."""
         step = self.log - self.before
         known = np.abs(step) > LEAST_SECANT_STEP
         slope = np.where(known, (answer - self.answer) / np.where(known, step, 1.0), 0.0)
-        slope = np.clip(slope, *SLOPES)
+        slope = np.clip(slope, *slopes)
         return Film(self.log + relax * (answer - self.log) / (1.0 - slope), self.log, answer)
 
     @property
@@ -152,8 +153,8 @@ def solve(problem: Problem) -> Solution:
     previous = np.full(n, np.inf)
     for count in range(1, MAX_ITERATIONS + 1):
         # the pressures move little and cost much: they are renewed at every third step
-        new, worst, duty_change = _step(part, current, relax, renew_pressure=count <= 2 or count % 3 == 0)
-        settled = worst <= 1.0
+        new, stirring, duty_change = _step(part, current, relax, renew_pressure=count <= 2 or count % 3 == 0)
+        settled = np.maximum(stirring, new.pressure_change / PRESSURE_TOLERANCE) <= 1.0
         iterations[active] = count
         last_change[active] = duty_change
         if done is None:
@@ -165,9 +166,9 @@ def solve(problem: Problem) -> Solution:
         if not len(keep):
             break
         # a case whose change does not fall is taken in smaller steps, one that falls steadily is let go again
-        slow = (worst > 0.8 * previous) & (count > 4)
+        slow = (stirring > 0.8 * previous) & (count > 4)
         relax = np.where(slow, np.maximum(0.6 * relax, 0.05), np.minimum(1.05 * relax, 1.0))
-        previous = worst
+        previous = stirring
         current = new
         if len(keep) < len(active):
             part, current = part.take(keep), new.take(keep)
@@ -301,7 +302,6 @@ def _wetness(problem: Problem, now: Iterate, dry: Array, capacity: Array) -> Wet
     return _wet.renew(
         problem.moisture,
         problem.outside,
-        now.wetness,
         now.field,
         now.walls,
         now.resistances,
@@ -328,7 +328,11 @@ def _balance(problem: Problem, film: InsideFilm, ua: Array, c_outside: Array) ->
 def _step(
     problem: Problem, now: Iterate, relax: Array, *, renew_pressure: bool
 ) -> tuple[Iterate, Array, Array]:
-    """One renewal; returns the new iterate, each case's largest change over its tolerance, and its duty change."""
+    """One renewal.
+
+    Returns the new iterate, each case's largest change over its tolerance (but for that of the outside pressure, which
+    is not renewed every time), and its duty change.
+    """
     like = now.field.heat
     weight = spread(relax, like)
     dry = _outside_film(problem, now).coefficient
@@ -339,8 +343,10 @@ def _step(
         assert problem.moisture is not None
         outside = outside + np.log(wetness.film_factor)
         capacity = _wet.capacity_outside(problem.moisture, wetness, now.field, capacity)
-    change = np.abs(outside - now.outside_film.log).max(axis=(1, 2)) / FILM_TOLERANCE
-    outside_film = now.outside_film.renewed(outside, weight)
+    # a wet cell's film and its capacity rate move together: no secant, and as tight as the heat balance
+    tolerance, slopes = (FILM_TOLERANCE, SLOPES) if wetness is None else (RESISTANCE_TOLERANCE, NO_SLOPES)
+    change = np.abs(outside - now.outside_film.log).max(axis=(1, 2)) / tolerance
+    outside_film = now.outside_film.renewed(outside, weight, slopes)
 
     film = _inside_film(problem, now)
     inside_film = None
@@ -351,7 +357,7 @@ def _step(
         if now.inside_film is not None:
             moved = np.abs(inside - now.inside_film.log).max(axis=(1, 2))
             change = np.maximum(change, moved / FILM_TOLERANCE)
-            inside_film = now.inside_film.renewed(inside, weight)
+            inside_film = now.inside_film.renewed(inside, weight, slopes)
             assert now.inside_pressure is not None
             step = inside_pressure - now.inside_pressure
             moved = np.abs(step / now.inside_pressure).reshape(len(change), -1).max(axis=1)
@@ -373,7 +379,6 @@ def _step(
     if renew_pressure:
         pressure = _outside_drop(problem, now).pressure
         pressure_change = np.abs(pressure / now.outside_pressure - 1.0).max(axis=1)
-    change = np.maximum(change, pressure_change / PRESSURE_TOLERANCE)
     duty = field.heat.sum(axis=(1, 2))
     scale = np.maximum(np.abs(duty), LEAST_RISE_K * capacity[:, 0].sum(axis=1))
     duty_change = np.abs(duty - now.duty) / scale

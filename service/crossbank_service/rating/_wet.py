@@ -19,12 +19,12 @@ from numpy.typing import NDArray
 from crossbank_service.methods.inside_condensing import steam_air_diffusivity
 from crossbank_service.properties import psychrometrics
 from crossbank_service.rating._arrays import Array, Cases, spread
-from crossbank_service.rating._network import Field
+from crossbank_service.rating._network import Field, relaxation
 from crossbank_service.rating._outside import OutsideStream
 from crossbank_service.rating._wall import Faces, Resistances
 
 FREEZING_K = 273.15
-ROOT_STEPS = 12
+ROOT_STEPS = 24
 DILUTE, RICH = 0.03, 0.07
 """Vapour mole fractions between which the driving force passes from one form to the other."""
 
@@ -83,7 +83,6 @@ def capacity_outside(moisture: Moisture, wetness: Wetness, field: Field, inlet_c
 def renew(
     moisture: Moisture,
     stream: OutsideStream,
-    before: Wetness,
     field: Field,
     walls: Faces,
     resistances: Resistances,
@@ -97,10 +96,8 @@ def renew(
 
     Parameters
     ----------
-    before : Wetness
-        Of the balance that gave ``field``.
     resistances : Resistances
-        Those of the same balance: their ``film`` counts the film factor of ``before``.
+        Those of the balance that gave ``field``; their ``film`` counts its film factor.
     film : Array
         Dry film coefficient [W/(m2 K)].
     prime_share : Array (N, rows, 1)
@@ -140,7 +137,9 @@ def renew(
             prime_reach=np.broadcast_to(outer, gas.shape)[:, r],
             fin_reach=(outer * resistances.fin_efficiency)[:, r],
             prime_share=np.broadcast_to(prime_share[:, r], humidity.shape),
-            humidity=0.5 * (humidity + np.minimum(before.leaving[:, r], humidity)),
+            leaving=field.outside_out[:, r],
+            humidity=humidity,
+            units=area[:, r] * transfer[:, r] / dry_flow,
             pressure=np.broadcast_to(pressure[:, r], humidity.shape),
             ratio=ratio,
         )
@@ -151,30 +150,21 @@ def renew(
         wet = (mass > 0.0) & (q_s > 0.0)
         mass = np.where(wet, mass, 0.0)
         first = field.outside_in[:, r]
-        clear = last = np.where(wet, first - q_s / capacity[:, r], field.outside_out[:, r])
-        after = settled = humidity - mass / dry_flow
-        liquid = psychrometrics.condensate_enthalpy(at)
-        for _ in range(
-            3
-        ):  # latent heat at the temperature the stream ends at closes the enthalpy balance exactly
-            gain = dry_flow * (psychrometrics.vapour_enthalpy(last) - liquid) / capacity[:, r]
-            last, settled = _fog(after, clear, gain, cell.pressure, ratio, wet)
-        given = np.where(wet, mass * (psychrometrics.vapour_enthalpy(last) - liquid), 0.0)
+        clear = np.where(wet, first - q_s / capacity[:, r], field.outside_out[:, r])
+        after = humidity - mass / dry_flow
+        per_kg = psychrometrics.vapour_enthalpy(cell.leaving) - psychrometrics.condensate_enthalpy(at)
+        gain = dry_flow * per_kg / capacity[:, r]
+        last, settled = _fog(after, clear, gain, cell.pressure, ratio, wet)
+        given = np.where(wet, mass * per_kg, 0.0)
         total = q_s + given
         cooling = np.maximum(capacity[:, r] * (first - last), 1e-6 * np.maximum(total, 1e-300))
         out.film_factor[:, r] = np.where(wet, total / np.where(wet, q_s, 1.0), 1.0)
         out.capacity_factor[:, r] = np.where(wet, total / np.where(wet, cooling, 1.0), 1.0)
-        # what the stream has lost by the last heat balance closes mass and heat with it; at the end it is the kinetics
-        kappa = out.capacity_factor[:, r]
-        released = np.maximum(-field.heat[:, r], 0.0) * (1.0 - 1.0 / kappa)
-        per_kg = psychrometrics.vapour_enthalpy(field.outside_out[:, r]) - liquid
-        lost = np.where(wet, np.minimum(released / per_kg, 0.999 * dry_flow * humidity), 0.0)
-        mist = np.where(wet, dry_flow * (after - settled), 0.0)
-        out.condensed[:, r] = lost * np.where(wet, mass / np.where(wet, mass + mist, 1.0), 0.0)
-        out.fog[:, r] = lost - out.condensed[:, r]
-        out.latent[:, r], out.surface[:, r], out.frost[:, r] = out.condensed[:, r] * per_kg, at, iced
+        out.condensed[:, r] = mass
+        out.fog[:, r] = np.where(wet, dry_flow * (after - settled), 0.0)
+        out.latent[:, r], out.surface[:, r], out.frost[:, r] = given, at, iced
         out.entering[:, r] = humidity
-        humidity = humidity - lost / dry_flow
+        humidity = settled
         out.leaving[:, r] = humidity
     return out
 
@@ -183,9 +173,9 @@ def renew(
 class _Cell:
     """The cells of one row, (N, segments): what their surface temperature hangs on.
 
-    Temperatures of stream and inside [K], ``inner`` resistance between inside and fin root [m2 K/W], dry film
-    [W/(m2 K)], mass transfer coefficient [kg/(m2 s)]; ``prime_reach`` and ``fin_reach`` are the differences
-    between stream and faces over that between stream and root.
+    Temperatures of stream and inside [K], ``leaving`` that at which the stream parts with its vapour, ``inner``
+    resistance between inside and fin root [m2 K/W], dry film [W/(m2 K)], mass transfer coefficient [kg/(m2 s)];
+    ``prime_reach`` and ``fin_reach`` are the differences between stream and faces over that between stream and root.
     """
 
     gas: Array
@@ -196,7 +186,9 @@ class _Cell:
     prime_reach: Array
     fin_reach: Array
     prime_share: Array
+    leaving: Array
     humidity: Array
+    units: Array
     pressure: Array
     ratio: Array
 
@@ -206,8 +198,13 @@ class _Cell:
         return self.film * reach * (self.gas - root)
 
     def drive(self, root: Array) -> tuple[Array, Array, Array]:
-        """Driving force over the whole surface, mean temperature of the wet part [K], and where frost would grow."""
+        """Driving force over the whole surface, mean temperature of the wet part [K], and where frost would grow.
+
+        The stream dries on its way through the cell: over ``units`` transfer units of wet surface the mean driving
+        force is (1 - exp(-N))/N of that at the inlet.
+        """
         drive, cold, iced = np.zeros_like(root), np.zeros_like(root), np.zeros_like(root)
+        square = np.zeros_like(root)
         parts = (self.prime_share, self.prime_reach), (1.0 - self.prime_share, self.fin_reach)
         for share, reach in parts:
             face = self.gas - reach * (self.gas - root)
@@ -216,30 +213,35 @@ class _Cell:
             iced = np.where(frozen, 1.0, iced)
             here = np.where(frozen, 0.0, here)
             drive, cold = drive + here, cold + here * face
+            square = square + here * here / np.maximum(share, 1e-12)
+        # the share of the surface that counts as wet grows from nothing as a part of it comes below the dew point
+        wet = drive * drive / np.where(square > 0.0, square, 1.0)
+        drive, cold = (each * relaxation(wet * self.units) for each in (drive, cold))
         return drive, np.where(drive > 0.0, cold / np.where(drive > 0.0, drive, 1.0), root), iced
 
     def _excess(self, root: Array) -> Array:
         """Heat that reaches the root less what the inside takes from it [W/m2], times the inner resistance [K]."""
         drive, at, _ = self.drive(root)
-        heat = psychrometrics.vapour_enthalpy(self.gas) - psychrometrics.condensate_enthalpy(at)
+        heat = psychrometrics.vapour_enthalpy(self.leaving) - psychrometrics.condensate_enthalpy(at)
         return self.inner * (self.sensible(root) + self.transfer * drive * heat) - (root - self.inside)
 
     def root(self) -> Array:
-        """Temperature of the fin root where the heats agree, between inside and stream: by bisected secants."""
+        """Temperature of the fin root where the heats agree, between inside and stream: regula falsi, Illinois rule."""
         low, high = np.minimum(self.inside, self.gas), np.maximum(self.inside, self.gas)
         at_low, at_high = self._excess(low), self._excess(high)
         guess = low
+        side = np.zeros_like(low)
         for _ in range(ROOT_STEPS):
-            # the Illinois rule: the end that stays counts half, so that neither end sticks
             width = at_low - at_high
-            guess = np.where(
-                width > 0.0, low + (high - low) * at_low / np.where(width > 0.0, width, 1.0), low
-            )
-            guess = np.clip(guess, low, high)
+            safe = np.where(width > 0.0, width, 1.0)
+            guess = np.clip(np.where(width > 0.0, low + (high - low) * at_low / safe, low), low, high)
             value = self._excess(guess)
             above = value > 0.0
             low, high = np.where(above, guess, low), np.where(above, high, guess)
-            at_low, at_high = np.where(above, value, 0.5 * at_low), np.where(above, 0.5 * at_high, value)
+            # an end that stays a second time counts half, so that it does not stick
+            at_low = np.where(above, value, np.where(side < 0.0, 0.5 * at_low, at_low))
+            at_high = np.where(above, np.where(side > 0.0, 0.5 * at_high, at_high), value)
+            side = np.where(above, 1.0, -1.0)
         return guess
 
 
