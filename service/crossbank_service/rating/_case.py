@@ -4,6 +4,7 @@ from dataclasses import dataclass, field
 from typing import Literal
 
 from crossbank.contract import Assumed, RateRequest
+from crossbank_service.properties import psychrometrics
 from crossbank_service.properties.moist_air import MASS_RATIO
 from crossbank_service.rating._circuit import Circuit
 
@@ -169,6 +170,15 @@ class Case:
         return abs(self.outside_temperature - self.inside.temperature)
 
     @property
+    def may_be_wet(self) -> bool:
+        """Whether any surface could be below the dew point of the outside stream: its coldest inlet is."""
+        if not self.humidity_ratio:
+            return False
+        vapour = self.outside_pressure * self.humidity_ratio / (self.humidity_ratio + self.molar_ratio)
+        coldest = min(self.inside.temperature, self.outside_temperature)
+        return float(psychrometrics.saturation_pressure(coldest)) < vapour
+
+    @property
     def group(self) -> tuple[object, ...]:
         """Cases of one group are rated in one array."""
         fluid = self.inside.fluid
@@ -183,4 +193,6 @@ class Case:
             self.property_state,
             tuple(sorted(self.methods.items())),
             tuple(section.shape for section in self.sections),
+            # a dry case beside a wet one would go through its arithmetic, and round by it
+            self.may_be_wet,
         )

@@ -9,7 +9,7 @@ import numpy as np
 
 from crossbank_service import properties
 from crossbank_service.banks import FinSet, TubeBank
-from crossbank_service.properties import Medium, psychrometrics
+from crossbank_service.properties import Medium
 from crossbank_service.rating import _lumped, _performance, _solver
 from crossbank_service.rating._arrays import Array
 from crossbank_service.rating._case import Case, FluidInput, InsideInput, SectionInput, narrow
@@ -102,20 +102,14 @@ def _column(cases: Sequence[Case], name: str) -> Array:
 
 
 def _moisture(cases: Sequence[Case]) -> Moisture | None:
-    """The vapour in the outside streams; None where no case has a surface that could be below its dew point."""
-    wet = [w or 0.0 for w in (case.humidity_ratio for case in cases)]
-    humidity, pressure = np.array(wet), _column(cases, "outside_pressure")
-    coldest = np.array([min(case.inside.temperature, case.outside_temperature) for case in cases])
-    ratio = _column(cases, "molar_ratio")
-    vapour = pressure * humidity / (humidity + ratio)
-    possible = (humidity > 0.0) & (coldest < psychrometrics.saturation_temperature(vapour))
-    if not possible.any():
+    """The vapour in the outside streams; None where no surface could be below its dew point."""
+    if not cases[0].may_be_wet:
         return None
-    flow = _column(cases, "outside_flow")
+    humidity = _column(cases, "humidity_ratio")
     return Moisture(
-        dry_flow=flow / (1.0 + humidity),
+        dry_flow=_column(cases, "outside_flow") / (1.0 + humidity),
         humidity=humidity,
-        molar_ratio=ratio,
+        molar_ratio=_column(cases, "molar_ratio"),
     )
 
 

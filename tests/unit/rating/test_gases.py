@@ -572,6 +572,16 @@ def test_a_case_does_not_depend_on_the_mixtures_beside_it() -> None:
     assert msgspec.json.encode(beside) == msgspec.json.encode(rated(bank()))
 
 
+def test_a_dry_case_does_not_depend_on_wet_ones_beside_it() -> None:
+    """Bit for bit: hot humid gas alone, and next to the same gas over cold water."""
+    wet, dry = bank(), bank()
+    wet["outside"]["inlet_temperature_k"] = 350.0
+    wet["inside"]["inlet_temperature_k"] = 300.0
+    assert rated(wet).latent_duty_w < 0.0
+    requests = [msgspec.convert(b, RateRequest) for b in (wet, dry, wet)]
+    assert msgspec.json.encode(rating.rate(requests)[1]) == msgspec.json.encode(rated(dry))
+
+
 @st.composite
 def mixtures(draw: st.DrawFn) -> Body:
     """Any mixture within the limits, from nothing but vapour to none, at any pressure rated."""
