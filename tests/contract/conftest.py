@@ -17,7 +17,7 @@ from crossbank_service.record import EventLog
 Body = dict[str, Any]
 
 
-@pytest.fixture(scope="session")
+@pytest.fixture(scope="module")
 def service() -> Iterator[httpx.Client]:
     """Give a connection to a service of its own, with default settings."""
     with httpx.Client(transport=AppTransport(create_app(Settings())), base_url="http://service") as client:

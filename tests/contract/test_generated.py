@@ -130,11 +130,9 @@ def sensible_bodies(draw: st.DrawFn) -> Any:
         body["bank"]["circuit"] = {"passes": draw(st.sampled_from(divisors))}
     if draw(st.booleans()):
         body["inside"] = {"kind": "held-surface", "temperature_k": draw(st.floats(260.0, 500.0))}
-    fitting = [
-        m.slug
-        for m in in_role("outside_heat_transfer")
-        if layout["arrangement"] in m.arrangements and "plain" in m.surfaces
-    ]
+    arrangement = layout["arrangement"]
+    methods = in_role("outside_heat_transfer")
+    fitting = [m.slug for m in methods if "plain" in m.surfaces and arrangement in m.arrangements]
     body["methods"] = {"outside_heat_transfer": draw(st.sampled_from(["auto", *fitting]))}
     body["detail"] = {"resolution": draw(st.sampled_from(["row", "bank"]))}
     return body

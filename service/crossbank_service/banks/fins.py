@@ -5,6 +5,7 @@ it gives the bank's areas and masses. Areas are m2 per metre of tube, so their u
 """
 
 from dataclasses import dataclass, fields
+from functools import cached_property
 from typing import Protocol
 
 import numpy as np
@@ -114,17 +115,17 @@ class Surface:
         """Return a selection of the surfaces."""
         return Surface(*(getattr(self, f.name)[index] for f in fields(self)))
 
-    @property
+    @cached_property
     def area(self) -> Array:
         """Whole outside surface [m2/m]."""
         return self.prime_area + self.fin_area
 
-    @property
+    @cached_property
     def area_ratio(self) -> Array:
         """Whole outside surface over that of the bare tube [-]."""
         return self.area / self.bare_area
 
-    @property
+    @cached_property
     def fin_area_share(self) -> Array:
         """Fin surface over the whole [-]."""
         return self.fin_area / self.area

@@ -118,51 +118,51 @@ class TubeBank:
                     fin_pitch=own.pitch,
                 )
 
-    @property
+    @cached_property
     def root_diameter(self) -> Array:
         """Diameter the correlations refer to: tube, fin root or collar [m]."""
         return self.surface.root_diameter
 
-    @property
+    @cached_property
     def a(self) -> Array:
         """Transverse pitch ratio."""
         return self.transverse_pitch / self.outer_diameter
 
-    @property
+    @cached_property
     def b(self) -> Array:
         """Longitudinal pitch ratio."""
         return self.longitudinal_pitch / self.outer_diameter
 
-    @property
+    @cached_property
     def bore(self) -> Array:
         """Inner diameter [m]."""
         return self.outer_diameter - 2.0 * self.wall_thickness
 
-    @property
+    @cached_property
     def width(self) -> Array:
         """Duct width across the tubes, side gaps measured from the fin tips [m]."""
         reach = (self.tubes_per_row - 1.0) * self.transverse_pitch + self.surface.envelope_diameter
         return reach + 2.0 * self.side_gap
 
-    @property
+    @cached_property
     def depth(self) -> Array:
         """Extent along the outside stream, over the fins [m]; plates reach half a pitch beyond the tubes."""
         if self.fins is not None and self.fins.kind == "plate":
             return self.rows * self.longitudinal_pitch
         return (self.rows - 1.0) * self.longitudinal_pitch + self.surface.envelope_diameter
 
-    @property
+    @cached_property
     def face_area(self) -> Array:
         """Section of the empty duct [m2]."""
         return self.width * self.tube_length
 
-    @property
+    @cached_property
     def diagonal_gap_governs(self) -> Array:
         """1.0 where the two diagonal gaps of a staggered pitch are narrower than the transverse gap."""
         narrower = self.surface.diagonal_gap < self.surface.transverse_gap
         return np.where((self.staggered > 0.5) & narrower & (self.rows > 1.0), 1.0, 0.0)
 
-    @property
+    @cached_property
     def free_area(self) -> Array:
         """Narrowest section of the outside stream [m2].
 
@@ -173,52 +173,52 @@ class TubeBank:
         beyond_half_gap = 2.0 * self.side_gap - clear
         return (self.tubes_per_row * self.surface.free_width + beyond_half_gap) * self.tube_length
 
-    @property
+    @cached_property
     def sigma(self) -> Array:
         """Narrowest section over the empty duct."""
         return self.free_area / self.face_area
 
-    @property
+    @cached_property
     def tube_count(self) -> Array:
         """Tubes in the bank; a row shifted by half a pitch counts like the others (one less and two halves)."""
         return self.covered_rows * self.tubes_per_row
 
-    @property
+    @cached_property
     def tube_run(self) -> Array:
         """Length of all tubes with this surface in the duct [m]."""
         return self.covered_rows * self.tubes_per_row * self.tube_length
 
-    @property
+    @cached_property
     def outside_area(self) -> Array:
         """All outside surface in the duct, fins included [m2]."""
         return self.surface.area * self.tube_run
 
-    @property
+    @cached_property
     def bare_area(self) -> Array:
         """Outer surface of the tubes without fins [m2]."""
         return self.surface.bare_area * self.tube_run
 
-    @property
+    @cached_property
     def fin_area(self) -> Array:
         """Surface of the fins [m2]."""
         return self.surface.fin_area * self.tube_run
 
-    @property
+    @cached_property
     def inside_area(self) -> Array:
         """Bore surface in the duct [m2]."""
         return np.pi * self.bore * self.tube_run
 
-    @property
+    @cached_property
     def bore_section(self) -> Array:
         """Flow section of one tube [m2]."""
         return 0.25 * np.pi * self.bore**2
 
-    @property
+    @cached_property
     def inside_volume(self) -> Array:
         """Volume of the bores [m3]."""
         return self.bore_section * self.tube_run
 
-    @property
+    @cached_property
     def metal_mass(self) -> Array:
         """Mass of tubes and fins in the duct [kg]; 0 where a density is unknown."""
         ring = 0.25 * np.pi * (self.outer_diameter**2 - self.bore**2)

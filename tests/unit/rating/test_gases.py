@@ -303,7 +303,7 @@ def test_the_estimate_of_real_gas_follows_the_reference_equations(
 
 
 def test_flue_gas_of_a_fuel_is_the_mixture_of_its_products() -> None:
-    """Oil at 20 % excess air equals the published composition given as a mixture (worked by hand, 6 digits)."""
+    """Oil at 20 % excess air equals its element balance, worked by hand to 6 digits, given as a mixture."""
     body = bank()
     body["outside"]["fluid"] = {
         "kind": "combustion-gas",
